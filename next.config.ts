@@ -1,0 +1,10 @@
+import type { NextConfig } from 'next'
+
+const config: NextConfig = {
+  turbopack: { root: import.meta.dirname },
+  poweredByHeader: false,
+  reactStrictMode: true,
+  serverExternalPackages: ['pino', 'exceljs'],
+}
+
+export default config
