@@ -1,0 +1,22 @@
+import type { Solution } from '@/lib/balance/solution'
+import type { ComponentId, StreamId } from '@/lib/book/ids'
+
+/** An answer with the order of streams and components that its flat arrays use. */
+export type SolvedCase = {
+  solution: Solution
+  streams: readonly StreamId[]
+  components: readonly ComponentId[]
+  streamIndex: ReadonlyMap<StreamId, number>
+  componentIndex: ReadonlyMap<ComponentId, number>
+  /** Records that the solver could not take, with the reason. */
+  leftOut: readonly { id: string; kind: string; what: string }[]
+}
+
+export type SolverHandle = {
+  /** The newest answer; the last one stays while a newer is on its way. */
+  solved: SolvedCase | null
+  /** True while the shown answer is older than the state. */
+  stale: boolean
+  /** A plain sentence when the solver had to be restarted or gave up. */
+  trouble: string | null
+}

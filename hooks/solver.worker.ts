@@ -1,0 +1,35 @@
+/// <reference lib="webworker" />
+import { solve } from '@/lib/balance'
+import { apply } from '@/lib/book/change'
+import { type BookState, emptyState, stateOf } from '@/lib/book/state'
+import { toProblem } from '@/lib/book/to-problem'
+import type { FromSolver, ToSolver } from './solver-messages'
+
+declare const self: DedicatedWorkerGlobalScope
+
+let state: BookState = emptyState()
+
+self.onmessage = (event: MessageEvent<ToSolver>) => {
+  const message = event.data
+  if (message.type === 'load') state = stateOf(message.records)
+  else {
+    const applied = apply(state, { id: 'worker', label: 'worker', ...message.body })
+    if (!applied.ok) return self.postMessage({ type: 'lost', sequence: message.sequence } satisfies FromSolver)
+    state = applied.state
+  }
+  self.postMessage(...answer(message))
+}
+
+function answer({ sequence, caseId }: ToSolver): [FromSolver, Transferable[]] {
+  try {
+    const { problem, streams, components, leftOut } = toProblem(state, caseId)
+    const solution = solve(problem)
+    return [
+      { type: 'solved', sequence, solution, streams, components, leftOut },
+      [solution.states.buffer, solution.values.buffer, solution.flags.buffer] as Transferable[],
+    ]
+  } catch (cause) {
+    // A bug in the solver must not silence the table: it is told, with what went wrong.
+    return [{ type: 'failed', sequence, what: cause instanceof Error ? cause.message : String(cause) }, []]
+  }
+}
