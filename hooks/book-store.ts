@@ -1,12 +1,12 @@
 import type { Change } from '@/lib/book/change'
 import { check } from '@/lib/book/check'
+import { conflictsText } from '@/lib/book/conflict-text'
 import { newId } from '@/lib/book/ids'
 import { addPending, type Overlay, overlayOf, receive, replaceConfirmed, replacePending } from '@/lib/book/overlay'
 import { rebase } from '@/lib/book/rebase'
 import { type BookState, stateOf } from '@/lib/book/state'
 import type { ApiFailure, BookApi, WriteResult } from './book-api'
 import type { SaveStatus } from './book-handle'
-import { sentenceOf } from './conflict-words'
 import type { EditQueue } from './edit-queue'
 
 export type BookSnapshot = { state: BookState; number: number; save: SaveStatus }
@@ -28,6 +28,8 @@ export class BookStore {
   private sending = false
   private wait = FIRST_WAIT
   private timer: ReturnType<typeof setTimeout> | undefined
+  /** Told when an own change will never be on the server as it was made. */
+  onDropped: (id: string) => void = () => {}
   private readonly written = new Map<string, Promise<void>>()
 
   constructor(
@@ -61,7 +63,7 @@ export class BookStore {
   /** Applies and queues a change, or says in a sentence why it cannot stand. */
   edit = (change: Change): string | null => {
     const added = addPending(this.overlay, change)
-    if (!added.ok) return sentenceOf(added.conflicts, this.overlay.shown)
+    if (!added.ok) return conflictsText(this.overlay.shown, added.conflicts)
     const problems = check(added.overlay.shown, change)
     if (problems[0]) return problems[0].what
     this.written.set(
@@ -169,6 +171,7 @@ export class BookStore {
       },
     }
     this.set(replacePending(this.overlay, change.id, null))
+    this.onDropped(change.id)
     await this.forget(change.id)
     return true
   }
@@ -213,6 +216,7 @@ export class BookStore {
         this.queue.add(by).catch(() => undefined),
       )
     this.set(replacePending(this.overlay, change.id, by))
+    this.onDropped(change.id)
     void this.forget(change.id)
     void this.pump()
   }

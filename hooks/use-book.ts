@@ -54,7 +54,11 @@ export function useBook(book: OpenedBook, onRefused: (sentence: string) => void)
     dedupingInterval: 1_000,
   })
 
-  const { history, remember } = useHistory(store.edit, onRefused)
+  const current = useCallback(() => store.getSnapshot().state, [store])
+  const { history, remember, forget } = useHistory({ current, write: store.edit }, onRefused)
+  useEffect(() => {
+    store.onDropped = forget
+  }, [store, forget])
   const edit = useCallback(
     (change: Change): string | null => {
       if (!book.mayEdit) return 'You can read this book, but your role does not edit it.'

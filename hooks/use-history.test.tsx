@@ -58,7 +58,7 @@ describe('undo and redo of a book in this page', () => {
     act(() => {
       said = hook.result.current.edit(rename('change-a', 'Other', 'A'))
     })
-    expect(said).toContain('Changed by someone else since')
+    expect(said).toContain('has been changed since, from “Other” to “Plant”')
     expect(name(hook)).toBe('Plant')
     act(() => {
       said = hook.result.current.edit(rename('change-a', 'Plant', ''))

@@ -1,45 +1,41 @@
 import { useCallback, useRef, useState } from 'react'
-import { type Change, invert } from '@/lib/book/change'
+import type { Change } from '@/lib/book/change'
+import { dropChange, emptyHistory, type History, pushChange, redo, undo } from '@/lib/book/history'
 import { newId } from '@/lib/book/ids'
+import type { BookState } from '@/lib/book/state'
 import type { EditHistory } from './book-handle'
 
-type Stacks = { undo: readonly Change[]; redo: readonly Change[] }
+/** The book that a history belongs to. */
+type Written = { current: () => BookState; write: (change: Change) => string | null }
 
 /**
  * One's own changes of this sitting, undone and redone as new changes. Where someone else changed a touched field since,
- * the edit is refused with both values and the entry stays.
+ * the step is refused with both values, `say` tells it, and the step stays.
  */
-export function useHistory(
-  edit: (change: Change) => string | null,
-  onRefused: (sentence: string) => void,
-): { history: EditHistory; remember: (change: Change) => void } {
-  const [stacks, setStacks] = useState<Stacks>({ undo: [], redo: [] })
-  const latest = useRef(stacks)
-  const put = useCallback((next: Stacks) => {
+export function useHistory({ current, write }: Written, say: (sentence: string) => void) {
+  const [shown, setShown] = useState<History>(emptyHistory)
+  const latest = useRef(shown)
+  const put = useCallback((next: History) => {
     latest.current = next
-    setStacks(next)
+    setShown(next)
   }, [])
-  const remember = useCallback((change: Change) => put({ undo: [...latest.current.undo, change], redo: [] }), [put])
-  const step = useCallback(
-    (from: 'undo' | 'redo') => {
-      const to = from === 'undo' ? 'redo' : 'undo'
-      const stack = latest.current[from]
-      const change = stack[stack.length - 1]
-      if (!change) return
-      const inverse = invert(change, newId())
-      const refused = edit(inverse)
-      if (refused) onRefused(refused)
-      else put({ ...latest.current, [from]: stack.slice(0, -1), [to]: [...latest.current[to], inverse] })
+  const remember = useCallback((change: Change) => put(pushChange(latest.current, change)), [put])
+  const forget = useCallback((id: string) => put(dropChange(latest.current, id)), [put])
+  const take = useCallback(
+    (step: typeof undo) => {
+      const taken = step(latest.current, current(), newId)
+      if (!taken) return
+      const refused = taken.ok ? write(taken.value.change) : taken.error.message
+      if (refused) say(refused)
+      else if (taken.ok) put(taken.value.history)
     },
-    [edit, onRefused, put],
+    [current, write, say, put],
   )
-  const undo = useCallback(() => step('undo'), [step])
-  const redo = useCallback(() => step('redo'), [step])
-  const history = {
-    undo,
-    redo,
-    undoLabel: stacks.undo[stacks.undo.length - 1]?.label ?? null,
-    redoLabel: stacks.redo[stacks.redo.length - 1]?.label ?? null,
+  const history: EditHistory = {
+    undo: useCallback(() => take(undo), [take]),
+    redo: useCallback(() => take(redo), [take]),
+    undoLabel: shown.done.at(-1)?.label ?? null,
+    redoLabel: shown.undone.at(-1)?.label ?? null,
   }
-  return { history, remember }
+  return { history, remember, forget }
 }

@@ -3,10 +3,10 @@
 import { useCallback, useRef, useState } from 'react'
 import { apply, type Change } from '@/lib/book/change'
 import { check } from '@/lib/book/check'
+import { conflictsText } from '@/lib/book/conflict-text'
 import type { BookRecord } from '@/lib/book/kinds'
 import { type BookState, stateOf } from '@/lib/book/state'
 import type { BookHandle } from './book-handle'
-import { sentenceOf } from './conflict-words'
 import { useHistory } from './use-history'
 
 /** A book that lives in this page only: the sample book of the front page. */
@@ -15,14 +15,15 @@ export function useLocalBook(records: readonly BookRecord[], onRefused: (sentenc
   const latest = useRef(state)
   const write = useCallback((change: Change): string | null => {
     const applied = apply(latest.current, change)
-    if (!applied.ok) return sentenceOf(applied.conflicts, latest.current)
+    if (!applied.ok) return conflictsText(latest.current, applied.conflicts)
     const problems = check(applied.state, change)
     if (problems[0]) return problems[0].what
     latest.current = applied.state
     setState(applied.state)
     return null
   }, [])
-  const { history, remember } = useHistory(write, onRefused)
+  const current = useCallback(() => latest.current, [])
+  const { history, remember } = useHistory({ current, write }, onRefused)
   const edit = useCallback(
     (change: Change): string | null => {
       const refused = write(change)

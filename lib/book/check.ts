@@ -1,3 +1,4 @@
+import { bookUnits } from '@/lib/balance/measure/units-of-measure'
 import type { Change } from './change'
 import { type BookRecord, type Kind, kindNames, kindOrder, placeId, references, schemas } from './kinds'
 import type { BookState } from './state'
@@ -52,6 +53,13 @@ function checkRecord(after: BookState, record: BookRecord, problems: RecordProbl
     if (value != null && !after[target].has(value))
       problems.push({ kind, id, field, what: `${calledBy(record)}: the ${kindNames[target]} that it names is gone` })
   }
+  if (record.kind === 'book' && !bookUnits(record.basis, record.flowUnit))
+    problems.push({
+      kind,
+      id,
+      field: 'flowUnit',
+      what: `“${record.flowUnit}” is no ${record.basis} flow unit known here: ${record.basis === 'mass' ? 'kg/h, t/d or lb/h' : 'kmol/h, mol/s or lbmol/h'} would fit`,
+    })
   if (record.kind === 'link') {
     const other = after.link.get(`${record.streamId}/${record.direction === 'in' ? 'out' : 'in'}`)
     if (other && other.unitId === record.unitId) {
