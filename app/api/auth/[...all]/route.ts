@@ -1,0 +1,19 @@
+import { toNextJsHandler } from 'better-auth/next-js'
+import { auth } from '@/lib/auth/auth'
+import { isOpenDoor } from '@/lib/auth/doors'
+import { fail } from '@/lib/errors'
+import { handle } from '@/lib/http/handle'
+
+const handlers = toNextJsHandler(auth)
+
+async function answer(request: Request, method: 'GET' | 'POST'): Promise<Response> {
+  return handle(request, 'auth', async () => {
+    if (!isOpenDoor(method, new URL(request.url).pathname)) return fail('notFound', 'There is nothing at this address.')
+    const response = await handlers[method](request)
+    // better-auth answers what it did not expect with an empty body, having logged it.
+    return response.status < 500 ? response : fail('internal', `better-auth answered ${response.status}`)
+  })
+}
+
+export const GET = (request: Request) => answer(request, 'GET')
+export const POST = (request: Request) => answer(request, 'POST')

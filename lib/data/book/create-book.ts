@@ -1,0 +1,43 @@
+import { and, eq } from 'drizzle-orm'
+import { z } from 'zod'
+import { project } from '@/db/schema/team'
+import type { Context } from '@/lib/auth/context'
+import { bookUnits } from '@/lib/balance'
+import { starterNames } from '@/lib/book/starters'
+import { ok, type Result } from '@/lib/errors'
+import { note } from '../door/audit'
+import { inTeam } from '../door/enter'
+import { noSuchProject } from '../door/refusals'
+import { visibleProjects } from '../door/visible-projects'
+import { bookName, flowUnit, recordId, teamSlug } from '../door/words'
+import { contentFrom } from '../records/book-content'
+import { insertBook } from '../records/new-book'
+
+const blank = z
+  .strictObject({ kind: z.literal('blank'), basis: z.enum(['mass', 'mole']), flowUnit })
+  .refine(({ basis, flowUnit: unit }) => bookUnits(basis, unit) !== undefined, {
+    path: ['flowUnit'],
+    message:
+      'is not a unit that fits the basis: kg/h, t/d, lb/h and the like by mass; kmol/h, mol/s and the like by mole',
+  })
+const starter = z.strictObject({ kind: z.literal('starter'), starter: z.enum(starterNames) })
+const input = z.strictObject({
+  team: teamSlug,
+  projectId: recordId,
+  name: bookName,
+  from: z.discriminatedUnion('kind', [blank, starter]),
+})
+
+/** Makes a book in a project: blank, or from a starter. */
+export function createBook(ctx: Context, given: z.input<typeof input>): Promise<Result<{ id: string }>> {
+  return inTeam(ctx, 'book.create', input, given, async (seat, { projectId, name, from }) => {
+    const visible = and(visibleProjects(seat), eq(project.id, projectId))
+    const [inProject] = await seat.tx.select({ id: project.id }).from(project).where(visible)
+    if (!inProject) return noSuchProject()
+    const made = await insertBook(seat, { projectId, ...contentFrom(from, name) })
+    if (!made.ok) return made
+    const { id } = made.value
+    await note(seat, 'book.create', { kind: 'book', id }, { name, projectId, from })
+    return ok({ id })
+  })
+}
