@@ -4,7 +4,7 @@ const config: NextConfig = {
   turbopack: { root: import.meta.dirname },
   poweredByHeader: false,
   reactStrictMode: true,
-  serverExternalPackages: ['pino', 'exceljs'],
+  serverExternalPackages: ['pino', 'exceljs', 'pg-boss', 'nodemailer'],
 }
 
 export default config
