@@ -1,10 +1,14 @@
+import type { Cell, Lines } from '@/lib/sheet/selection'
+
 /** What the one grid is told to draw. It knows rows, columns and places; what stands in them is its owner's business. */
+
+export const ASKED = Symbol('asked')
 
 /** The two frozen columns at the start of every row. */
 export const NAME_COLUMN = '#name'
 export const UNIT_COLUMN = '#unit'
 
-export type GridPlace = { row: string; column: string }
+export type GridPlace = Cell
 
 export type GridRow = {
   id: string
@@ -53,11 +57,17 @@ export type GridSource = {
   rows: readonly GridRow[]
   frozen: number
   view: (place: GridPlace) => CellView
+  /** Whether the editor opens here. */
   mayEdit: (place: GridPlace) => boolean
+  /** Whether nothing can be changed here, neither by typing nor by a key or a click. */
+  isReadOnly: (place: GridPlace) => boolean
   /** What F2 puts into the editor. */
   editText: (place: GridPlace) => string
-  /** Takes what was typed; a sentence when it cannot be taken, and then the editor stays open. */
-  commit: (place: GridPlace, text: string) => string | null
+  /**
+   * Takes what was typed. A sentence: it cannot be taken, and the editor stays open. ASKED: a question hangs on the
+   * cell now, and the cursor stays there.
+   */
+  commit: (place: GridPlace, text: string) => string | typeof ASKED | null
   /** Words offered while typing. */
   suggestions?: (place: GridPlace) => readonly string[]
   /** Delete. */
@@ -74,9 +84,13 @@ export type GridSource = {
   paste: (range: GridRange, data: { text: string; html: string }) => void
 }
 
-/** Ids in the order of the screen, so that an inserted row or column cannot shift what is meant. */
-export type GridRange = { rows: readonly string[]; columns: readonly string[] }
-
-export type GridSelection = { active: GridPlace; anchor: GridPlace }
+/** The selected rows and columns, by id, in the order shown. */
+export type GridRange = Lines
 
 export type GridEdit = { place: GridPlace; draft: string; mode: 'overwrite' | 'edit'; reason: string | null }
+
+/** Whether a cell shows a value, for jumps to the edge of a block. */
+export function isFilled(source: GridSource, place: GridPlace): boolean {
+  const { tone, text } = source.view(place)
+  return text !== '' && tone !== 'unknown' && tone !== 'absent'
+}

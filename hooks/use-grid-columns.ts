@@ -34,7 +34,8 @@ export type GridColumns = {
   totalSize: number
 }
 
-const LEAST = 68
+const LEAST = 64
+const EASY = 74
 const MOST = 104
 
 /**
@@ -42,8 +43,9 @@ const MOST = 104
  * Streams stretch to fill the room there is. Cells are not asked of the table: they are drawn from ids and typed arrays.
  */
 export function useGridColumns(streamIds: readonly string[], room: number, narrow: boolean): GridColumns {
-  const nameSize = narrow ? 112 : 150
-  const unitSize = narrow ? 46 : 60
+  const unitSize = narrow ? 58 : 60
+  const left = room - unitSize - streamIds.length * EASY
+  const nameSize = narrow ? 108 : Math.max(150, Math.min(200, left))
   const free = room - nameSize - unitSize - 2
   const size = Math.max(LEAST, Math.min(MOST, Math.floor(free / Math.max(1, streamIds.length))))
   const columns = useMemo(

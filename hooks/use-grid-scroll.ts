@@ -1,5 +1,5 @@
 import { useVirtualizer } from '@tanstack/react-virtual'
-import { type RefObject, useCallback, useEffect, useLayoutEffect, useState } from 'react'
+import { type RefObject, useCallback, useEffect, useLayoutEffect, useRef, useState } from 'react'
 import type { GridColumns } from './use-grid-columns'
 
 export type GridScroll = {
@@ -8,17 +8,17 @@ export type GridScroll = {
   to: number
   /** Brings a stream column into sight; the frozen columns cover part of the scroller. */
   showColumn: (streamIndex: number) => void
+  /** A row's lane gives itself here while it is mounted, and is then moved along. */
+  lane: (element: HTMLElement | null) => (() => void) | undefined
 }
 
 /**
- * The one horizontal scroller of the sheet. The panes stay put inside it (sticky) and move their lanes by
- * `--grid-shift`, so that heads, table and connections can never stand askew.
+ * The one horizontal scroller of the sheet. The panes stay put inside it (sticky) and their lanes are moved, so that heads,
+ * table and connections can never stand askew. Each lane is moved by itself: a custom property on a common ancestor
+ * would make the browser work out the style of every cell anew in every frame.
  */
-export function useGridScroll(
-  scroller: RefObject<HTMLDivElement | null>,
-  stack: RefObject<HTMLDivElement | null>,
-  columns: GridColumns,
-): GridScroll {
+export function useGridScroll(scroller: RefObject<HTMLDivElement | null>, columns: GridColumns): GridScroll {
+  const lanes = useRef(new Set<HTMLElement>())
   const { sizes, offsets, frozenSize, totalSize } = columns
   const virtualizer = useVirtualizer({
     horizontal: true,
@@ -35,11 +35,25 @@ export function useGridScroll(
   useEffect(() => {
     const element = scroller.current
     if (!element) return
-    const follow = () => stack.current?.style.setProperty('--grid-shift', `${-element.scrollLeft}px`)
+    const follow = () => {
+      const shift = shiftBy(element)
+      for (const lane of lanes.current) lane.style.transform = shift
+    }
     follow()
     element.addEventListener('scroll', follow, { passive: true })
     return () => element.removeEventListener('scroll', follow)
-  }, [scroller, stack])
+  }, [scroller])
+  const lane = useCallback(
+    (element: HTMLElement | null) => {
+      if (!element) return
+      lanes.current.add(element)
+      element.style.transform = shiftBy(scroller.current)
+      return () => {
+        lanes.current.delete(element)
+      }
+    },
+    [scroller],
+  )
   const showColumn = useCallback(
     (index: number) => {
       const element = scroller.current
@@ -53,8 +67,10 @@ export function useGridScroll(
     [scroller, offsets, frozenSize, totalSize],
   )
   const items = virtualizer.getVirtualItems()
-  return { from: items[0]?.index ?? 0, to: items[items.length - 1]?.index ?? -1, showColumn }
+  return { from: items[0]?.index ?? 0, to: items[items.length - 1]?.index ?? -1, showColumn, lane }
 }
+
+const shiftBy = (scroller: HTMLElement | null): string => `translateX(${-(scroller?.scrollLeft ?? 0)}px)`
 
 /** The inner size of an element, kept up to date; 0 before it is there. */
 export function useRoom(element: RefObject<HTMLElement | null>): { width: number; height: number } {

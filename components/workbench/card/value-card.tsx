@@ -1,0 +1,103 @@
+'use client'
+
+import { Button } from '@/components/ui/button'
+import type { CellQuantity } from '@/lib/balance/solution'
+import { setGivens } from '@/lib/book/edits/givens'
+import { setPresence } from '@/lib/book/edits/presence'
+import { newId } from '@/lib/book/ids'
+import type { RecordOf } from '@/lib/book/kinds'
+import { type BookView, rowUnit } from '../book-view'
+import { flagWords, isDoubtful, type Reading, readCell, shownNumber } from '../cell-reading'
+import { CommitInput } from '../commit-input'
+import type { Desk } from '../desk'
+import { rowTitle, valueRow } from '../rows'
+import { readTyped } from '../table-edits'
+import { CardHead, CardSection, StateTag } from './card-parts'
+import { ConflictList } from './conflict-list'
+import { GivenDetails } from './given-details'
+import { otherUnits } from './other-units'
+
+type ValueCardProps = {
+  view: BookView
+  desk: Desk
+  stream: RecordOf<'stream'>
+  quantity: CellQuantity
+  componentId: string | null
+}
+
+/** One cell of the stream table: its value in several units, its state, what was typed and where that comes from. */
+export function ValueCard({ view, desk, stream, quantity, componentId }: ValueCardProps) {
+  const reading = readCell(view, stream.id, quantity, componentId)
+  const { shown } = rowUnit(view, quantity)
+  const component = componentId === null ? undefined : view.state.component.get(componentId)
+  const title = rowTitle(quantity, view.book.basis)
+  const number = shownNumber(view, quantity, reading, 1)
+  const heading = component ? `${component.name || component.tag}, ${title.toLowerCase()}` : title
+  return (
+    <>
+      <CardHead
+        where={`${stream.tag} · ${heading}`}
+        title={reading.state === 'wrong' ? `“${reading.given?.text}”` : number || noValue(reading)}
+        {...(number && reading.state !== 'wrong' ? { unit: shown } : {})}
+      />
+      <p className="mt-1.5 flex flex-wrap items-center gap-x-2.5 gap-y-1 text-xs text-ink-2">
+        <StateTag state={reading.state} />
+        {reading.value === null ? null : otherUnits(view, quantity, reading.value).join(' · ')}
+      </p>
+      {reading.reason || reading.flags ? (
+        <div
+          className={`mt-3 grid gap-1 rounded-control px-3 py-2 text-sm ${isTrouble(reading) ? 'bg-odds' : 'bg-rail'}`}
+        >
+          {reading.reason ? <p>{reading.reason}</p> : null}
+          {flagWords(reading.flags).map((word) => (
+            <p key={word}>{word}</p>
+          ))}
+        </div>
+      ) : null}
+      <ConflictList view={view} stream={stream} quantity={quantity} component={component} />
+      {view.mayEdit && reading.state !== 'absent' ? (
+        <CardSection title="Value">
+          <CommitInput
+            label={reading.given ? 'As typed' : 'Type a value'}
+            value={reading.given?.text ?? ''}
+            hint={`In ${shown}, or with another unit behind it`}
+            onCommit={(text) => {
+              const place = { row: valueRow(quantity, componentId), column: stream.id }
+              const cell = readTyped(view, place, text)
+              return cell ? desk.run(setGivens(view.state, [cell], newId)) : null
+            }}
+          />
+        </CardSection>
+      ) : null}
+      {reading.state === 'absent' && view.mayEdit && componentId !== null ? (
+        <Button
+          className="mt-4"
+          onClick={() => desk.tryRun(setPresence(view.state, [stream.id], [componentId], 'present', newId))}
+        >
+          Let it be present in {stream.tag}
+        </Button>
+      ) : null}
+      {reading.given ? <GivenDetails key={reading.given.id} view={view} desk={desk} given={reading.given} /> : null}
+      {reading.others.length > 0 ? (
+        <CardSection title="Further readings">
+          <ul className="grid gap-1 text-sm">
+            {reading.others.map((other) => (
+              <li key={other.id}>
+                {other.text} by {other.instrument}{' '}
+                {other.source ? <span className="text-ink-3">{other.source}</span> : null}
+              </li>
+            ))}
+          </ul>
+        </CardSection>
+      ) : null}
+    </>
+  )
+}
+
+const isTrouble = (reading: Reading): boolean => reading.reason !== null || isDoubtful(reading.flags)
+
+function noValue(reading: Reading): string {
+  if (reading.state === 'absent') return 'Not in this stream'
+  if (reading.state === 'missing') return 'Not available'
+  return 'Not known yet'
+}

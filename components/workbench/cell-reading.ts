@@ -1,0 +1,151 @@
+import { CellFlag, type CellQuantity, CellState, slotOf } from '@/lib/balance/solution'
+import { absenceId, type ComponentId, type StreamId } from '@/lib/book/ids'
+import type { RecordOf } from '@/lib/book/kinds'
+import { bookUnitOf, convert } from '@/lib/book/units'
+
+import { entryMeasure, readEntry } from '@/lib/sheet/entry'
+import { formatNumber } from '@/lib/sheet/format'
+import { type BookView, cellKey, isFraction, rowUnit } from './book-view'
+
+export type ReadState =
+  | 'given'
+  | 'solvable'
+  | 'unknown'
+  | 'atOdds'
+  | 'absent'
+  | 'check'
+  | 'withdrawn'
+  | 'wrong'
+  | 'missing'
+
+/** What one cell of the stream table holds, before it is put into words. */
+export type Reading = {
+  state: ReadState
+  /** In the row's unit; null where there is no value. */
+  value: number | null
+  /** The given that stands here, if any, also one that is not used. */
+  given: RecordOf<'given'> | null
+  /** Further readings of the same measure. */
+  others: readonly RecordOf<'given'>[]
+  flags: number
+  slot: number | null
+  /** Why there is no value, or why what was typed is not used. */
+  reason: string | null
+}
+
+/** Half a unit in the last typed digit, and the value, in the row's unit. */
+function inRow(
+  view: BookView,
+  quantity: CellQuantity,
+  given: RecordOf<'given'>,
+): { value: number; halfWidth: number | null } | null {
+  if (given.value === null) return null
+  const { basis, flowUnit } = view.book
+  const from = given.unit ?? bookUnitOf(given.quantity, basis, flowUnit)
+  const to = rowUnit(view, quantity).symbol
+  if (from === to) return { value: given.value, halfWidth: given.halfWidth }
+  const value = from === undefined ? undefined : convert(given.value, from, to)
+  if (from === undefined || value === undefined) return null
+  const halfWidth = given.halfWidth === null ? null : (convert(given.halfWidth, from, to) ?? null)
+  return { value: Number(value.toPrecision(14)), halfWidth }
+}
+
+/** The cell of a stream: what is typed there comes first, then what the solver found. */
+export function readCell(
+  view: BookView,
+  streamId: StreamId,
+  quantity: CellQuantity,
+  componentId: ComponentId | null,
+): Reading {
+  const { solved, state } = view
+  const list = view.givensAt.get(cellKey(streamId, quantity, componentId)) ?? []
+  const given = list[0] ?? null
+  const others = list.slice(1)
+  const nothing: Reading = { state: 'unknown', value: null, given, others, flags: 0, slot: null, reason: null }
+  if (componentId !== null && state.absence.has(absenceId(streamId, componentId)))
+    return { ...nothing, state: 'absent', reason: given ? (view.leftOut.get(given.id) ?? null) : null }
+  const stream = solved?.streamIndex.get(streamId)
+  const component = componentId === null ? 0 : solved?.componentIndex.get(componentId)
+  const slot =
+    solved && stream !== undefined && component !== undefined
+      ? slotOf(solved.solution.nComponents, stream, quantity, component)
+      : null
+  const found = slot === null || !solved ? CellState.unknown : (solved.solution.states[slot] as CellState)
+  const flags = slot === null || !solved ? 0 : (solved.solution.flags[slot] ?? 0)
+  const raw = slot === null || !solved ? Number.NaN : (solved.solution.values[slot] ?? Number.NaN)
+  const computed = Number.isNaN(raw) ? null : isFraction(quantity) ? raw * 100 : raw
+  if (given && given.value === null)
+    return { ...nothing, state: 'wrong', flags, slot, reason: reasonOf(view, quantity, given) }
+  if (given && given.use === 'given') {
+    const typed = inRow(view, quantity, given)
+    const refused = view.leftOut.get(given.id)
+    if (refused !== undefined && !isStaleRefusal(found))
+      return { ...nothing, state: 'wrong', value: typed?.value ?? null, flags, slot, reason: refused }
+    return {
+      ...nothing,
+      state: found === CellState.atOdds ? 'atOdds' : 'given',
+      value: typed?.value ?? null,
+      flags,
+      slot,
+    }
+  }
+  const kept = given ? (given.use === 'check' ? 'check' : 'withdrawn') : null
+  // An answer that is a moment old may still call a cleared cell given: it is unknown until the next one comes.
+  if (found === CellState.solvable || (found === CellState.given && others.some(({ use }) => use === 'given')))
+    return { ...nothing, state: kept ?? 'solvable', value: computed, flags, slot }
+  if (found === CellState.atOdds) return { ...nothing, state: 'atOdds', value: computed, flags, slot }
+  if (found === CellState.absent && quantity.startsWith('other'))
+    return { ...nothing, state: 'missing', slot, reason: 'A molar mass is missing' }
+  return { ...nothing, state: kept ?? 'unknown', slot }
+}
+
+/** A given that the newest answer counts as given was taken, whatever an older list says. */
+const isStaleRefusal = (found: CellState): boolean => found === CellState.given || found === CellState.atOdds
+
+function reasonOf(view: BookView, quantity: CellQuantity, given: RecordOf<'given'>): string {
+  const entry = readEntry(given.text, {
+    measure: entryMeasure(given.quantity, view.book.basis),
+    unit: rowUnit(view, quantity).symbol,
+    decimal: view.decimal,
+  })
+  return entry.ok ? `“${given.text}” could not be read when it was typed: type it again.` : entry.reason
+}
+
+/** The number as the row prints it. */
+export function shownNumber(view: BookView, quantity: CellQuantity, reading: Reading, extraDigits = 0): string {
+  if (reading.value === null) return ''
+  const { decimal } = view
+  const style = isFraction(quantity) ? 'percent' : 'flow'
+  if (reading.given && (reading.state === 'given' || reading.state === 'atOdds')) {
+    const typed = inRow(view, quantity, reading.given)
+    return formatNumber(reading.value, style, { decimal, typed: true, halfWidth: typed?.halfWidth ?? null })
+  }
+  return formatNumber(reading.value, style, { decimal, extraDigits })
+}
+
+export const stateWords: Record<ReadState, string> = {
+  given: 'given',
+  solvable: 'solvable now',
+  unknown: 'still unknown',
+  atOdds: 'at odds',
+  absent: 'absent',
+  check: 'check only',
+  withdrawn: 'withdrawn',
+  wrong: 'not understood',
+  missing: 'not available',
+}
+
+/** A flag that asks for a look; a stream without flow is no fault. */
+export const isDoubtful = (flags: number): boolean => (flags & ~CellFlag.zeroFlow) !== 0
+
+/** What the flags of a value say, each a sentence. */
+export function flagWords(flags: number): string[] {
+  const words: string[] = []
+  if (flags & CellFlag.negative) words.push('The result is negative: look for a wrong given or a wrong connection.')
+  if (flags & CellFlag.aboveOne) words.push('The fraction is above 1: look for a wrong given.')
+  if (flags & CellFlag.amplified) words.push('A small error in a given makes a large one here.')
+  if (flags & CellFlag.weak) words.push('The uncertainty of this value is large.')
+  if (flags & CellFlag.localOnly) words.push('This is one root; others may exist.')
+  if (flags & CellFlag.zeroFlow) words.push('The stream has no flow.')
+  return words
+}

@@ -1,0 +1,27 @@
+'use client'
+
+import { useState } from 'react'
+import { notifyProblem } from '@/components/ui/toast'
+import { type OpenedBook, useBook } from '@/hooks/use-book'
+import { useSolver } from '@/hooks/use-solver'
+import { inOrder } from '@/lib/book/state'
+import { Workbench } from './workbench'
+
+type TeamBenchProps = { opened: OpenedBook; crumb: { label: string; href: string }; readOnly: string | null }
+
+/** A book kept on the server, at work. */
+export function TeamBench({ opened, crumb, readOnly }: TeamBenchProps) {
+  const book = useBook(opened, notifyProblem)
+  const [caseId] = useState(() => inOrder(book.state.case)[0]?.id ?? '')
+  const solver = useSolver(book.state, caseId)
+  return (
+    <Workbench
+      book={book}
+      solver={solver}
+      caseId={caseId}
+      crumb={crumb}
+      downloadHref={`/api/books/${opened.id}/table.xlsx`}
+      {...(readOnly === null ? {} : { readOnly })}
+    />
+  )
+}

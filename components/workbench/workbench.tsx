@@ -1,0 +1,186 @@
+'use client'
+
+import { type KeyboardEvent, useMemo, useRef, useState } from 'react'
+import { cellId } from '@/components/grid/grid-row'
+import { PointMenu } from '@/components/grid/point-menu'
+import { Caution } from '@/components/ui/caution'
+import { notifyProblem } from '@/components/ui/toast'
+import type { BookHandle } from '@/hooks/book-handle'
+import { NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
+import type { SolverHandle } from '@/hooks/solver-handle'
+import { useGridCursor } from '@/hooks/use-grid-cursor'
+import { inOrder } from '@/lib/book/state'
+import { BenchBody } from './bench-body'
+import { BenchHeader } from './bench-header'
+import { bookView } from './book-view'
+import { type Desk, type DialogRequest, type Offer, runner } from './desk'
+import { BenchDialogs } from './dialogs/bench-dialogs'
+import { linksRows, linksSource } from './links-source'
+import { OfferNote } from './offer-note'
+import type { PanelKey } from './panel-tabs'
+import { PlaceMenu } from './place-menu'
+import { goToNextRegion } from './regions'
+import { type SectionKey, valueRow } from './rows'
+import { SaveTrouble } from './save-state'
+import { Strip } from './strip'
+import { tableRows } from './table-cells'
+import { tableSource } from './table-source'
+import { useDecimal } from './use-reader'
+import { useWave } from './use-wave'
+
+export type WorkbenchProps = {
+  book: BookHandle
+  solver: SolverHandle
+  caseId: string
+  crumb?: { label: string; href: string } | null
+  /** What is said while nothing waits to be sent. */
+  kept?: string
+  /** Why it cannot be edited, in words, where it cannot. */
+  readOnly?: string
+  downloadHref?: string | null
+  headerEnd?: React.ReactNode
+}
+
+const startOpen: ReadonlySet<SectionKey> = new Set(['fraction', 'componentFlow'])
+
+/** One book at work: header, strip, sheet, panels and cell card, over any handle of a book. */
+export function Workbench({ book, solver, caseId, crumb = null, kept = 'All changes kept', ...props }: WorkbenchProps) {
+  const decimal = useDecimal()
+  const [open, setOpen] = useState(startOpen)
+  const [panel, setPanel] = useState<PanelKey>('connections')
+  const [pane, setPane] = useState<'table' | 'links'>('table')
+  const [offer, setOffer] = useState<Offer | null>(null)
+  const [menu, setMenu] = useState<Parameters<Desk['openMenu']>[0] | null>(null)
+  const [dialog, setDialog] = useState<DialogRequest | null>(null)
+  const root = useRef<HTMLDivElement>(null)
+
+  const view = useMemo(
+    () => bookView(book.state, caseId, solver.solved, book.mayEdit, decimal),
+    [book.state, caseId, solver.solved, book.mayEdit, decimal],
+  )
+  const desk = useMemo((): Desk => {
+    const run = runner(book.edit)
+    return {
+      run,
+      tryRun: (edit) => {
+        const refused = run(edit)
+        if (refused) notifyProblem(refused)
+        return refused === null
+      },
+      tell: notifyProblem,
+      offer: setOffer,
+      openMenu: setMenu,
+      openDialog: setDialog,
+    }
+  }, [book.edit])
+
+  const rows = useMemo(() => tableRows(view, open), [view, open])
+  const unitRows = useMemo(() => linksRows(view), [view])
+  const streamIds = useStable(view.streams.map(({ id }) => id))
+  const columnIds = useMemo(() => [NAME_COLUMN, UNIT_COLUMN, ...streamIds], [streamIds])
+  const firstStream = inOrder(book.state.stream)[0]?.id ?? NAME_COLUMN
+  const tableCursor = useGridCursor(rows, columnIds, () => ({ row: valueRow('flow'), column: firstStream }))
+  const linksCursor = useGridCursor(unitRows, columnIds, () => ({
+    row: unitRows[0]?.id ?? '',
+    column: firstStream,
+  }))
+  const table = useMemo(
+    () =>
+      tableSource({
+        view,
+        rows,
+        desk,
+        toggle: (section) =>
+          setOpen((was) => {
+            const next = new Set(was)
+            if (!next.delete(section)) next.add(section)
+            return next
+          }),
+      }),
+    [view, rows, desk],
+  )
+  const links = useMemo(() => linksSource(view, unitRows, desk), [view, unitRows, desk])
+  const wave = useWave(solver.solved)
+  const cursor = pane === 'links' && panel === 'connections' && unitRows.length > 0 ? linksCursor : tableCursor
+  const shownPane = cursor === linksCursor ? 'links' : 'table'
+  const showStream = (streamId: string) => {
+    tableCursor.select({ row: 'tag', column: streamId })
+    setPane('table')
+  }
+
+  const onKeyDown = (event: KeyboardEvent) => {
+    if (event.key === 'F6' && root.current && goToNextRegion(root.current, event.shiftKey)) event.preventDefault()
+  }
+  return (
+    // biome-ignore lint/a11y/noStaticElementInteractions: F6 goes round the parts from wherever the focus is
+    <div
+      ref={root}
+      onKeyDown={onKeyDown}
+      className="flex h-(--page-height) min-h-96 flex-col gap-2.5 px-5 pt-3 pb-2 max-sm:gap-2 max-sm:px-2.5 max-sm:pt-2"
+    >
+      <BenchHeader
+        book={book}
+        view={view}
+        desk={desk}
+        crumb={crumb}
+        kept={kept}
+        downloadHref={props.downloadHref ?? null}
+      >
+        {props.headerEnd}
+      </BenchHeader>
+      {props.readOnly ? <p className="text-sm text-ink-2">{props.readOnly}</p> : null}
+      <SaveTrouble save={book.save} />
+      <Strip
+        view={view}
+        stale={solver.stale && solver.solved !== null}
+        trouble={solver.trouble}
+        onNotes={() => setPanel('notes')}
+      />
+      <BenchBody
+        view={view}
+        desk={desk}
+        history={book.history}
+        table={table}
+        links={links}
+        tableCursor={tableCursor}
+        linksCursor={linksCursor}
+        streamIds={streamIds}
+        wave={wave}
+        panel={panel}
+        onPanel={setPanel}
+        onPane={setPane}
+        shown={{ pane: shownPane, place: cursor.selection.active }}
+        onStream={showStream}
+      />
+      <footer>
+        <Caution />
+      </footer>
+      {offer ? (
+        <OfferNote
+          offer={offer}
+          cellId={cellId(`grid-${offer.pane}`, offer.place.row, offer.place.column)}
+          onDone={() => setOffer(null)}
+        />
+      ) : null}
+      <PointMenu at={menu?.at ?? null} label="Rows and columns" onShut={() => setMenu(null)}>
+        {menu ? (
+          <PlaceMenu
+            pane={menu.pane}
+            range={(menu.pane === 'table' ? tableCursor : linksCursor).range}
+            view={view}
+            desk={desk}
+          />
+        ) : null}
+      </PointMenu>
+      <BenchDialogs request={dialog} view={view} desk={desk} onShut={() => setDialog(null)} />
+    </div>
+  )
+}
+
+/** The same list for as long as its ids are the same, so that columns are not made anew on every edit. */
+function useStable(ids: string[]): readonly string[] {
+  const [kept, setKept] = useState<readonly string[]>(ids)
+  if (kept.length === ids.length && kept.every((id, index) => id === ids[index])) return kept
+  setKept(ids)
+  return ids
+}
