@@ -3,13 +3,12 @@
 import { RotateCcw } from 'lucide-react'
 import { Button } from '@/components/ui/button'
 import { invitation, typedAtFirst } from './plant'
-import { PlantSketch } from './plant-sketch'
 import { PlantTable } from './plant-table'
 import type { PlantView } from './plant-view'
 import { cellName, howFar } from './plant-words'
 import { usePlant } from './use-plant'
 
-/** The front page's own little plant: a flow sketch, the sentence that says how far it is, and the table to type in. */
+/** The front page's own little plant: the sentence that says how far it is, the table to type in, and what connects to what. */
 export function LivePlant({ first }: { first: PlantView }) {
   const { view, typed, wrong, type, reset } = usePlant(first)
   const { lead, rest } = howFar(view)
@@ -25,8 +24,7 @@ export function LivePlant({ first }: { first: PlantView }) {
 
   return (
     <section aria-label="A little plant to try" className="sheet overflow-hidden">
-      <PlantSketch view={view} className="mx-auto block w-full max-w-[570px] px-3 pt-4 pb-3" />
-      <div className="border-t border-hair">
+      <div>
         <div className="flex min-h-[66px] flex-wrap items-center gap-x-3 gap-y-2 px-4 py-2.5">
           <p role="status" className="min-w-0 flex-1 basis-72">
             {reason ?? (

@@ -1,10 +1,12 @@
 'use client'
 
-import { Fragment, type ReactNode, useState } from 'react'
+import { Fragment, useState } from 'react'
 import { classNames } from '@/components/ui/class-names'
 import { CellState } from '@/lib/balance/solution'
 import { type CellKey, cellKey, plant, plantRows } from './plant'
 import { PlantCell } from './plant-cell'
+import { PlantConnections } from './plant-connections'
+import { GroupRow, label } from './plant-group'
 import type { PlantView } from './plant-view'
 import type { WrongEntry } from './use-plant'
 
@@ -15,7 +17,6 @@ type PlantTableProps = {
 }
 
 const groups: Record<string, string> = { 'x-alum': 'Mass fraction', 'n-alum': 'Component flow' }
-const label = 'border-e border-b border-hair px-2.5 text-start'
 const head = 'border-e border-b border-hair bg-rail px-1 text-end last:border-e-0 sm:px-2'
 
 const isSolvable = (view: PlantView, key: CellKey) => view.cells[key]?.state === CellState.solvable
@@ -57,14 +58,15 @@ export function PlantTable({ view, wrong, onType }: PlantTableProps) {
   return (
     <table className="w-full table-fixed border-separate border-spacing-0">
       <caption className="sr-only">
-        Stream table of an invented alum crystalliser: type a value into any cell, or clear one.
+        Stream table of an invented alum crystalliser: type a value into any cell, or clear one. Its last rows say which
+        stream goes into and comes out of which unit.
       </caption>
       <thead>
         <tr className="h-[30px] font-heading text-base font-semibold">
           <th scope="col" className={classNames(label, 'w-[92px] bg-rail sm:w-[150px]')}>
             Stream
           </th>
-          <th scope="col" className={classNames(head, 'hidden w-[52px] sm:table-cell')}>
+          <th scope="col" className={classNames(head, 'hidden w-[66px] sm:table-cell')}>
             <span className="sr-only">Unit</span>
           </th>
           {plant.streams.map((stream) => (
@@ -86,16 +88,7 @@ export function PlantTable({ view, wrong, onType }: PlantTableProps) {
       <tbody>
         {plantRows.map((row, rowIndex) => (
           <Fragment key={row.id}>
-            {groups[row.id] ? (
-              <tr className="h-[23px] text-2xs text-ink-3">
-                <GroupHead columns={6} className="sm:hidden">
-                  {groups[row.id]}
-                </GroupHead>
-                <GroupHead columns={7} className="max-sm:hidden">
-                  {groups[row.id]}
-                </GroupHead>
-              </tr>
-            ) : null}
+            {groups[row.id] ? <GroupRow>{groups[row.id]}</GroupRow> : null}
             <tr className={classNames('text-sm', row.kind === 'flow' && 'h-8 font-semibold')}>
               <th scope="row" className={classNames(label, row.kind === 'flow' ? 'font-semibold' : 'font-normal')}>
                 {row.label}{' '}
@@ -129,19 +122,7 @@ export function PlantTable({ view, wrong, onType }: PlantTableProps) {
           </Fragment>
         ))}
       </tbody>
+      <PlantConnections />
     </table>
-  )
-}
-
-/** Twice, since a narrow screen has no column of units. */
-function GroupHead({ columns, className, children }: { columns: number; className: string; children: ReactNode }) {
-  return (
-    <th
-      scope="colgroup"
-      colSpan={columns}
-      className={classNames('border-b border-hair bg-paper px-2.5 text-start font-normal', className)}
-    >
-      {children}
-    </th>
   )
 }
