@@ -9,7 +9,12 @@ export default defineConfig({
     projects: [
       {
         resolve: { alias },
-        test: { name: 'architecture', environment: 'node', include: ['tests/architecture.test.ts'] },
+        test: {
+          name: 'architecture',
+          environment: 'node',
+          include: ['tests/architecture.test.ts'],
+          testTimeout: 60_000,
+        },
       },
       {
         resolve: { alias },
@@ -23,6 +28,7 @@ export default defineConfig({
           environment: 'happy-dom',
           include: ['components/**/*.test.tsx', 'hooks/**/*.test.tsx', 'app/**/*.test.tsx'],
           setupFiles: ['tests/component-setup.ts'],
+          testTimeout: 20_000,
         },
       },
       {
@@ -32,8 +38,21 @@ export default defineConfig({
           environment: 'node',
           include: ['tests/integration/**/*.test.ts'],
           globalSetup: ['tests/integration/global-setup.ts'],
+          setupFiles: ['tests/integration/setup.ts'],
           fileParallelism: false,
           testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        resolve: { alias },
+        test: {
+          name: 'browser',
+          environment: 'node',
+          include: ['tests/e2e/**/*.e2e.test.ts'],
+          globalSetup: ['tests/e2e/global-setup.ts'],
+          fileParallelism: false,
+          testTimeout: 60_000,
           hookTimeout: 60_000,
         },
       },

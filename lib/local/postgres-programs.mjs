@@ -38,7 +38,7 @@ export async function postgresPrograms({ major, signal } = {}) {
   const what = major ? `PostgreSQL ${major}, which made this checkout's database,` : `PostgreSQL ${oldest} or newer`
   throw new Trouble(
     `${what} was not found on this machine. Install its server (on Debian or Ubuntu: apt-get install ${name}) and start again, ` +
-      'or set DATABASE_URL to a database you already have.',
+      'or set DATABASE_URL (for npm test: TEST_DATABASE_URL) to one you already have.',
   )
 }
 
