@@ -103,5 +103,7 @@ export type Solution = {
   blockedBy: [slot: number, conflicts: number[]][]
   extents: ExtentResult[]
   conflicts: Conflict[]
+  /** More minimal sets exist than are listed. */
+  conflictsTruncated?: boolean
   diagnostics: Diagnostic[]
 }

@@ -1,0 +1,161 @@
+import type { LinearForm } from '../measure/measure'
+import type { Model } from '../model'
+import { type Assembly, type Member, memberOfRule } from '../rows/assemble'
+import type { Elimination } from '../sparse/elimination'
+import { solveTransposed } from '../sparse/solve'
+import { evaluate } from '../states/knowledge'
+import type { Resolved } from '../states/resolve'
+
+/**
+ * A combination of rows in which every unknown cancels. With the typed values put in, what is left is `gap`: 0 where the
+ * values agree. `weight` says how much of each member's value goes in: changing that value by d changes the gap by
+ * weight x d.
+ */
+export type Circuit = {
+  gap: number
+  /** Size of the terms that the gap is made of: a gap beside which it is rounding is none. */
+  terms: number
+  weight: Map<Member, number>
+  /** What each member's half-width can make of the gap. */
+  reach: Map<Member, number>
+  /** Sources of balance rows that take part. */
+  structure: Set<number>
+}
+
+/** A row that weighs less than this part of the heaviest one takes part by rounding only. */
+const NOISE = 1e-12
+
+/** Rounding of a sum beside its terms, with room for long chains. */
+const ROUNDING = 1e-13
+
+/** Traces rows back to what was typed. */
+export class Tracer {
+  constructor(
+    private readonly model: Model,
+    private readonly assembly: Assembly,
+    private readonly resolved: Resolved,
+  ) {}
+
+  /** The circuit of a dependent row (by its number among the compiled rows) with the pivot rows. */
+  ofDependent(row: number): Circuit {
+    const e = this.resolved.knowledge.elimination
+    const target = new Float64Array(e.rows.nColumns)
+    for (let k = e.rows.start[row] as number; k < (e.rows.start[row + 1] as number); k++)
+      target[e.rows.column[k] as number] = e.rows.value[k] as number
+    const { y } = solveTransposed(e, target)
+    y[row]! -= 1
+    return this.collect(e, y, -1)
+  }
+
+  /** How a form that is the same in every solution rests on the rows; undefined where it does not. */
+  ofForm(e: Elimination, form: LinearForm): Circuit | undefined {
+    const target = new Float64Array(e.rows.nColumns)
+    form.columns.forEach((column, k) => {
+      target[column] = form.coefficients[k] as number
+    })
+    const { y, misses } = solveTransposed(e, target)
+    return misses ? undefined : this.collect(e, y, 1)
+  }
+
+  private collect(e: Elimination, y: Float64Array, sign: number): Circuit {
+    const circuit: Circuit = { gap: 0, terms: 0, weight: new Map(), reach: new Map(), structure: new Set() }
+    const sizes = y.map((factor, i) => (factor === 0 ? 0 : Math.abs(factor) * this.sizeOf(e, i)))
+    const largest = sizes.reduce((most, size) => Math.max(most, size), 0)
+    for (let i = 0; i < y.length; i++)
+      if ((sizes[i] as number) > NOISE * largest)
+        this.addRow(circuit, e.rows.stored[i] as number, sign * (y[i] as number))
+    circuit.terms = sizes.reduce((sum, size) => sum + size, 0)
+    return settleGap(circuit)
+  }
+
+  /** Largest term of a row at the generic solution, so that rows are compared by what they weigh there. */
+  private sizeOf(e: Elimination, row: number): number {
+    const { generic } = this.resolved.knowledge
+    let most = Number.MIN_VALUE
+    for (let k = e.rows.start[row] as number; k < (e.rows.start[row + 1] as number); k++)
+      most = Math.max(most, Math.abs((e.rows.value[k] as number) * (generic[e.rows.column[k] as number] as number)))
+    return most
+  }
+
+  private addRow(circuit: Circuit, row: number, factor: number): void {
+    const { rows } = this.assembly
+    circuit.gap += factor * (rows.rhs[row] as number)
+    const number = rows.source[row] as number
+    const source = rows.sources[number]
+    const restsOn = this.resolved.restsOn.get(row)
+    if (restsOn) this.addRests(circuit, row, factor, restsOn)
+    if (source?.type === 'balance') circuit.structure.add(number)
+    if (source?.type !== 'given' && source?.type !== 'rule') return
+    const member = source.type === 'given' ? source.index : memberOfRule(this.model, source.index)
+    const typed = rows.typed[row]
+    const { generic } = this.resolved.knowledge
+    const below = typed?.measure.denominator
+    const scale = typed ? (below ? evaluate(below, generic).value : 1) : 0
+    add(circuit.weight, member, factor * scale)
+    add(circuit.reach, member, factor * scale * (typed?.halfWidth ?? 0))
+  }
+
+  /** A row that was turned linear rests on values known before; their members take part in proportion. */
+  private addRests(circuit: Circuit, row: number, factor: number, forms: readonly LinearForm[]): void {
+    const { rows } = this.assembly
+    const { generic } = this.resolved.knowledge
+    const round = [...this.resolved.rounds].reverse().find(({ firstRow }) => firstRow <= row)
+    if (!round) return
+    let size = 0
+    for (let k = rows.start[row] as number; k < (rows.start[row + 1] as number); k++)
+      size += Math.abs((rows.value[k] as number) * (generic[rows.column[k] as number] as number))
+    for (const form of forms) {
+      const rest = this.ofForm(round.knowledge.elimination, form)
+      if (!rest) continue
+      const { terms } = evaluate(form, round.knowledge.generic)
+      const share = terms > 0 ? (factor * size) / terms : 0
+      for (const [member, weight] of rest.weight) add(circuit.weight, member, share * weight)
+      for (const [member, reach] of rest.reach) add(circuit.reach, member, share * reach)
+      for (const source of rest.structure) circuit.structure.add(source)
+    }
+  }
+}
+
+function add(map: Map<Member, number>, member: Member, value: number): void {
+  map.set(member, (map.get(member) ?? 0) + value)
+}
+
+/** Ratio of the gap to what the half-widths of the members can make of it: above 1 they cannot all hold. */
+export function tension({ gap, reach }: Circuit): number {
+  let sum = 0
+  for (const value of reach.values()) sum += Math.abs(value)
+  if (gap === 0) return 0
+  return sum === 0 ? Number.POSITIVE_INFINITY : Math.abs(gap) / sum
+}
+
+/** a x left + b x right. */
+export function combineCircuits(a: number, left: Circuit, b: number, right: Circuit): Circuit {
+  const weight = new Map<Member, number>()
+  const reach = new Map<Member, number>()
+  for (const [factor, from] of [
+    [a, left],
+    [b, right],
+  ] as const) {
+    for (const [member, value] of from.weight) add(weight, member, factor * value)
+    for (const [member, value] of from.reach) add(reach, member, factor * value)
+  }
+  for (const member of [...weight.keys()]) {
+    const terms = Math.abs(a * (left.weight.get(member) ?? 0)) + Math.abs(b * (right.weight.get(member) ?? 0))
+    if (Math.abs(weight.get(member) as number) > 1e-9 * terms) continue
+    weight.delete(member)
+    reach.delete(member)
+  }
+  return settleGap({
+    gap: a * left.gap + b * right.gap,
+    terms: Math.abs(a) * left.terms + Math.abs(b) * right.terms,
+    weight,
+    reach,
+    structure: new Set([...left.structure, ...right.structure]),
+  })
+}
+
+/** A gap that is rounding beside its terms is 0. */
+function settleGap(circuit: Circuit): Circuit {
+  if (Math.abs(circuit.gap) <= ROUNDING * circuit.terms) circuit.gap = 0
+  return circuit
+}

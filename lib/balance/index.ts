@@ -1,0 +1,10 @@
+/** The face of the solver: a checked problem in, states and values out. Pure; runs in a worker, on the server and in scripts. */
+export { atomicWeights } from './chemistry/atomic-weights'
+export { type Atoms, molarMassOf, parseFormula } from './chemistry/chemical-formula'
+export { elementGaps, massGap } from './chemistry/reaction-balance'
+export { type FormulaNode, leavesOf, type ParsedFormula, parseFormulaText } from './formula/parse-formula'
+export * from './measure/units-of-measure'
+export * from './problem'
+export { type Result, type ResultCell, toResult } from './result'
+export * from './solution'
+export { solve } from './solve'

@@ -1,0 +1,107 @@
+import type { Model } from '../model'
+import { otherPerOwn } from '../model'
+import type { Quantity } from '../problem'
+
+/** Sum of coefficient times column, plus a constant. Columns are not repeated. */
+export type LinearForm = { columns: number[]; coefficients: number[]; constant: number }
+
+/** One linear form, or the ratio of two: everything that a person reads or types. */
+export type Measure = { numerator: LinearForm; denominator?: LinearForm }
+
+export const constantForm = (constant: number): LinearForm => ({ columns: [], coefficients: [], constant })
+export const columnForm = (column: number, coefficient = 1): LinearForm =>
+  column < 0 ? constantForm(0) : { columns: [column], coefficients: [coefficient], constant: 0 }
+
+/** Coefficients that cancel to this part of their terms are rounding of numbers typed, such as 1 - 0.1 - 0.9. */
+const CANCELS = 1e-15
+
+/** a x left + b x right, entries that cancel dropped. */
+export function combine(a: number, left: LinearForm, b: number, right: LinearForm): LinearForm {
+  const sum = new Map<number, number>()
+  left.columns.forEach((column, k) => {
+    sum.set(column, a * (left.coefficients[k] as number))
+  })
+  right.columns.forEach((column, k) => {
+    const before = sum.get(column) ?? 0
+    const term = b * (right.coefficients[k] as number)
+    const after = before + term
+    sum.set(column, Math.abs(after) <= CANCELS * (Math.abs(before) + Math.abs(term)) ? 0 : after)
+  })
+  const columns: number[] = []
+  const coefficients: number[] = []
+  for (const [column, coefficient] of sum)
+    if (coefficient !== 0) {
+      columns.push(column)
+      coefficients.push(coefficient)
+    }
+  return { columns, coefficients, constant: a * left.constant + b * right.constant }
+}
+
+export const isConstant = (form: LinearForm): boolean => form.columns.length === 0
+
+export const total = (model: Model, stream: number): LinearForm => columnForm(model.totalColumn[stream] as number)
+
+export const part = (model: Model, stream: number, component: number): LinearForm =>
+  columnForm(model.flowColumn[stream * model.nComponents + component] as number)
+
+/** Flow of one component on the other basis. */
+export const otherPart = (model: Model, stream: number, component: number): LinearForm =>
+  columnForm(model.flowColumn[stream * model.nComponents + component] as number, otherPerOwn(model, component))
+
+/** Total on the other basis: its own column where one was made, else the sum over the components. */
+export function otherTotal(model: Model, stream: number): LinearForm {
+  const column = model.otherTotalColumn[stream] as number
+  return column >= 0 ? columnForm(column) : otherSum(model, stream)
+}
+
+/** Total on the other basis written out in component flows. */
+export function otherSum(model: Model, stream: number): LinearForm {
+  const list = model.present[stream] as number[]
+  return {
+    columns: list.map((c) => model.flowColumn[stream * model.nComponents + c] as number),
+    coefficients: list.map((c) => otherPerOwn(model, c)),
+    constant: 0,
+  }
+}
+
+/** Volume per time (m3) by the stream's density: mass over density. */
+function volume(model: Model, stream: number): LinearForm {
+  const density = model.problem.streams[stream]?.density as number
+  const mass = model.problem.basis === 'mass' ? total(model, stream) : otherTotal(model, stream)
+  return combine(model.units.mass.factor / density, mass, 0, constantForm(0))
+}
+
+/** The measure that a quantity of a stream stands for; flows in the units of `model.units`, fractions of 1. */
+export function measureOf(model: Model, quantity: Quantity, stream: number, component: number): Measure {
+  const own = model.problem.basis
+  switch (quantity) {
+    case 'flow':
+      return { numerator: total(model, stream) }
+    case 'componentFlow':
+      return { numerator: part(model, stream, component) }
+    case 'massFlow':
+      return { numerator: own === 'mass' ? total(model, stream) : otherTotal(model, stream) }
+    case 'moleFlow':
+      return { numerator: own === 'mole' ? total(model, stream) : otherTotal(model, stream) }
+    case 'componentMassFlow':
+      return { numerator: own === 'mass' ? part(model, stream, component) : otherPart(model, stream, component) }
+    case 'componentMoleFlow':
+      return { numerator: own === 'mole' ? part(model, stream, component) : otherPart(model, stream, component) }
+    case 'volumeFlow':
+      return { numerator: volume(model, stream) }
+    case 'massFraction':
+      return own === 'mass' ? share(model, stream, component) : otherShare(model, stream, component)
+    case 'moleFraction':
+      return own === 'mole' ? share(model, stream, component) : otherShare(model, stream, component)
+  }
+}
+
+export const share = (model: Model, stream: number, component: number): Measure => ({
+  numerator: part(model, stream, component),
+  denominator: total(model, stream),
+})
+
+export const otherShare = (model: Model, stream: number, component: number): Measure => ({
+  numerator: otherPart(model, stream, component),
+  denominator: otherTotal(model, stream),
+})

@@ -1,0 +1,114 @@
+import type { Problem, Quantity } from './problem'
+import {
+  CellFlag,
+  type CellFlagName,
+  CellState,
+  type Conflict,
+  type Diagnostic,
+  type ExtentResult,
+  type Place,
+  type Solution,
+  type SolveStatus,
+  type Summary,
+  slotOf,
+} from './solution'
+import { quantityOfCell } from './states/cells'
+
+/** One cell of the result, as `npm run solve` prints it. */
+export type ResultCell = {
+  stream: string
+  quantity: Quantity
+  component?: string
+  state: 'given' | 'solvable' | 'unknown' | 'atOdds'
+  value?: number
+  step?: number
+  flags?: CellFlagName[]
+  amplification?: number
+  blockedBy?: number[]
+}
+
+export type Check = {
+  code: 'sum' | 'redundant' | 'checkOnly'
+  givens: Place[]
+  relations: string[]
+  by: number
+  tolerance: number
+  agrees: boolean
+}
+
+/** The result `tallybrook-result/1`. Boundaries, workings, checks and what to measure next are empty until they are built. */
+export type Result = {
+  format: 'tallybrook-result/1'
+  name: string
+  summary: Summary
+  cells: ResultCell[]
+  extents: ExtentResult[]
+  boundaries: never[]
+  workings: never[]
+  conflicts: Conflict[]
+  conflictsTruncated?: boolean
+  checks: Check[]
+  measureNext: never[]
+  diagnostics: Diagnostic[]
+  status: SolveStatus
+}
+
+const stateNames = {
+  [CellState.given]: 'given',
+  [CellState.solvable]: 'solvable',
+  [CellState.unknown]: 'unknown',
+  [CellState.atOdds]: 'atOdds',
+} as const
+
+/** The solution of a problem as plain JSON: cells of every stream that exist, then the rest. */
+export function toResult(problem: Problem, solution: Solution): Result {
+  const amplification = new Map(solution.amplification)
+  const blockedBy = new Map(solution.blockedBy)
+  const cells: ResultCell[] = []
+  const push = (s: number, quantity: Parameters<typeof quantityOfCell>[1], c: number): void => {
+    const slot = slotOf(solution.nComponents, s, quantity, Math.max(c, 0))
+    const state = solution.states[slot]
+    if (state === undefined || state === CellState.absent) return
+    const value = solution.values[slot] as number
+    const bits = solution.flags[slot] as number
+    const flags = (Object.keys(CellFlag) as CellFlagName[]).filter((name) => bits & CellFlag[name])
+    const factor = amplification.get(slot)
+    const blocked = blockedBy.get(slot)
+    cells.push({
+      stream: problem.streams[s]?.id as string,
+      quantity: quantityOfCell({ problem }, quantity),
+      ...(c >= 0 && { component: problem.components[c]?.id as string }),
+      state: stateNames[state as keyof typeof stateNames],
+      ...(!Number.isNaN(value) && { value }),
+      ...(flags.length > 0 && { flags }),
+      ...(factor !== undefined && { amplification: factor }),
+      ...(blocked && { blockedBy: blocked }),
+    })
+  }
+  for (let s = 0; s < solution.nStreams; s++)
+    for (const [flow, part, fraction] of [
+      ['flow', 'componentFlow', 'fraction'],
+      ['otherFlow', 'otherComponentFlow', 'otherFraction'],
+    ] as const) {
+      push(s, flow, -1)
+      for (let c = 0; c < solution.nComponents; c++) {
+        push(s, part, c)
+        push(s, fraction, c)
+      }
+    }
+  return {
+    format: 'tallybrook-result/1',
+    name: problem.name,
+    summary: solution.summary,
+    cells,
+    extents: solution.extents,
+    boundaries: [],
+    workings: [],
+    conflicts: solution.conflicts,
+    ...(solution.conflictsTruncated && { conflictsTruncated: true }),
+    checks: [],
+    measureNext: [],
+    diagnostics: solution.diagnostics,
+    status: solution.status,
+  }
+}

@@ -1,0 +1,94 @@
+import type { LinearForm, Measure } from '../measure/measure'
+import { seededRandom } from '../random'
+import type { Elimination } from '../sparse/elimination'
+import { MOVES, probe, solveParticular } from '../sparse/solve'
+
+const PROBES = 3
+const SEED = 20_240_611
+/** A denominator below this part of its terms is no flow at all. */
+const ZERO_DENOMINATOR = 1e-9
+
+/**
+ * What the rows say: one generic solution and independent directions in which they leave it free. Everything else is a
+ * question put to these: a measure is known when it is the same along all of them.
+ */
+export type Knowledge = {
+  elimination: Elimination
+  /** Particular solution plus the first probe; length nColumns. */
+  generic: Float64Array
+  particular: Float64Array
+  /** Empty where nothing is free. */
+  probes: Float64Array[]
+  random: () => number
+}
+
+export function gatherKnowledge(elimination: Elimination): Knowledge {
+  const random = seededRandom(SEED)
+  const particular = solveParticular(elimination)
+  const size = typicalSize(elimination)
+  const probes: Float64Array[] = []
+  if (elimination.free.length > 0)
+    for (let q = 0; q < PROBES; q++) probes.push(probe(elimination, random).map((value) => value * size))
+  const first = probes[0]
+  const generic = first ? particular.map((value, j) => value + (first[j] as number)) : particular
+  return { elimination, generic, particular, probes, random }
+}
+
+/** One more direction, for questions that three do not settle. */
+export function addProbe(knowledge: Knowledge): Float64Array {
+  const size = typicalSize(knowledge.elimination)
+  const direction = probe(knowledge.elimination, knowledge.random).map((value) => value * size)
+  knowledge.probes.push(direction)
+  return direction
+}
+
+/** Geometric mean of what the rows hold on the right, so that probes are of the size of the flows. */
+function typicalSize({ rows }: Elimination): number {
+  let sum = 0
+  let count = 0
+  for (const value of rows.rhs)
+    if (value !== 0) {
+      sum += Math.log(Math.abs(value))
+      count++
+    }
+  return count === 0 ? 1 : Math.exp(sum / count)
+}
+
+/** Value and size of the terms of a form at a point; a direction leaves the constant out. */
+export function evaluate(form: LinearForm, x: Float64Array, direction = false): { value: number; terms: number } {
+  let value = direction ? 0 : form.constant
+  let terms = Math.abs(value)
+  for (let k = 0; k < form.columns.length; k++) {
+    const term = (form.coefficients[k] as number) * (x[form.columns[k] as number] as number)
+    value += term
+    terms += Math.abs(term)
+  }
+  return { value, terms }
+}
+
+/** The value of a form where it is the same in every solution, else undefined. */
+export function fixedValue(knowledge: Knowledge, form: LinearForm): number | undefined {
+  for (const direction of knowledge.probes) {
+    const { value, terms } = evaluate(form, direction, true)
+    if (Math.abs(value) > MOVES * terms) return undefined
+  }
+  const { value, terms } = evaluate(form, knowledge.particular)
+  return Math.abs(value) <= 1e-11 * terms ? 0 : value
+}
+
+/** The value of a measure where every solution gives the same, else undefined. The ratio to a flow of 0 is unknown. */
+export function knownMeasure(knowledge: Knowledge, measure: Measure): number | undefined {
+  const { numerator, denominator } = measure
+  if (!denominator) return fixedValue(knowledge, numerator)
+  const at = evaluate(denominator, knowledge.generic)
+  if (Math.abs(at.value) <= ZERO_DENOMINATOR * at.terms || at.value === 0) return undefined
+  const top = evaluate(numerator, knowledge.generic)
+  const ratio = Math.abs(top.value) <= 1e-11 * top.terms ? 0 : top.value / at.value
+  // The generic point holds the first probe, so that a particular solution off the ray shows in that probe.
+  for (const direction of knowledge.probes) {
+    const up = evaluate(numerator, direction, true)
+    const down = evaluate(denominator, direction, true)
+    if (Math.abs(up.value - ratio * down.value) > MOVES * (up.terms + Math.abs(ratio) * down.terms)) return undefined
+  }
+  return ratio
+}

@@ -1,0 +1,81 @@
+import { Tracer, tension } from '../conflicts/circuit'
+import type { Model } from '../model'
+import { turnComposition } from '../pending/composition'
+import { type Pending, type TurnedRow, turnFormula, turnScaled } from '../pending/pending'
+import type { Assembly } from '../rows/assemble'
+import { compileRows } from '../sparse/compiled-rows'
+import { eliminate } from '../sparse/elimination'
+import { gatherKnowledge, type Knowledge } from './knowledge'
+import { openRows } from './open-rows'
+import { zeroSums } from './zero-sums'
+
+/** Rows that were added in one round, with the knowledge that they rest on. */
+export type Round = { knowledge: Knowledge; firstRow: number }
+
+export type Resolved = {
+  knowledge: Knowledge
+  /** Rules that could not be turned into rows. */
+  left: Pending[]
+  /** Earlier rounds, for tracing what an added row rests on. */
+  rounds: Round[]
+  /** Store row -> forms that an added row rests on. */
+  restsOn: Map<number, TurnedRow['restsOn']>
+}
+
+/** Half-widths times this are rounding: such rows hold, however much a long chain of differences blurs them. */
+export const AGREES_BY_FAR = 1e-6
+
+/** Far above the longest chain of splitters; only a guard. */
+const MOST_ROUNDS = 200
+
+/**
+ * Solves the rows, turns what has become linear into rows, fixes flows at 0 whose sum is 0, and solves again until
+ * nothing changes. Stops where rows do not hold, unless `evenOpen`.
+ */
+export function resolve(model: Model, assembly: Assembly, evenOpen = false): Resolved {
+  const { rows, nonNegative } = assembly
+  const rounds: Round[] = []
+  const restsOn = new Map<number, TurnedRow['restsOn']>()
+  const fixedAtZero = new Set<number>()
+  const freeWhenTurned = new Map<Pending, number>()
+  const isOpen = (sofar: Resolved): boolean => {
+    const open = openRows(sofar.knowledge)
+    if (open.length === 0) return false
+    const tracer = new Tracer(model, assembly, sofar)
+    return open.some((row) => tension(tracer.ofDependent(row)) > AGREES_BY_FAR)
+  }
+  let left = assembly.pending
+  const zero = rows.from({ type: 'zero' })
+  for (let round = 0; ; round++) {
+    const knowledge = gatherKnowledge(eliminate(compileRows(rows, model.nColumns), nonNegative))
+    const firstRow = rows.count
+    const push = (source: number, { form, restsOn: forms }: TurnedRow): void => {
+      if (form.columns.length === 0 && form.constant === 0) return
+      restsOn.set(rows.push(source, form.columns, form.coefficients, 0 - form.constant), forms)
+    }
+    // From rows that contradict each other nothing follows: what is at odds has to be settled first.
+    if (round < MOST_ROUNDS && (evenOpen || !isOpen({ knowledge, left, rounds, restsOn }))) {
+      left = left.filter((item) => {
+        if (item.kind === 'composition') {
+          const { length } = knowledge.elimination.free
+          const { rows: turned, settled } = turnComposition(model, knowledge, item.composition)
+          // Rows that brought nothing the last time clash with others: adding them again would never end.
+          if (turned.length === 0 || length >= (freeWhenTurned.get(item) ?? Number.POSITIVE_INFINITY)) return !settled
+          for (const row of turned) push(item.source, row)
+          freeWhenTurned.set(item, length)
+          return !settled
+        }
+        const turned = item.kind === 'scaled' ? turnScaled(knowledge, item) : turnFormula(model, knowledge, item)
+        if (turned) push(item.source, turned)
+        return !turned
+      })
+      for (const { column, sum } of zeroSums(model, knowledge))
+        if (!fixedAtZero.has(column)) {
+          fixedAtZero.add(column)
+          push(zero, { form: { columns: [column], coefficients: [1], constant: 0 }, restsOn: [sum] })
+        }
+    }
+    if (rows.count === firstRow) return { knowledge, left, rounds, restsOn }
+    rounds.push({ knowledge, firstRow })
+  }
+}
