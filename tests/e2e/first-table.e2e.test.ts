@@ -56,8 +56,9 @@ scenario(
         await tabTo(/^\s*add\s*$/i)
         await press('Enter')
         await page.getByRole('menu').waitFor()
-        const steps = { 'Add streams': 0, 'Add components': 1, 'Add units': 2 }[button]
-        for (let step = 0; step < steps; step++) await press('ArrowDown')
+        const item = page.getByRole('menuitem', { name: new RegExp(`^${button.replace('Add ', '')}…`, 'i') })
+        for (let step = 0; step < 6 && !(await item.evaluate((e) => e === document.activeElement)); step++)
+          await press('ArrowDown')
       }
       await press('Enter')
       await page.getByRole('dialog').waitFor()
@@ -134,7 +135,7 @@ scenario('a block of 20 streams by 5 components comes in from another spreadshee
       .or(page.getByRole('button', { name: 'Add', exact: true }))
       .first()
       .click()
-    const item = page.getByRole('menuitem', { name: new RegExp(what.replace('Add ', ''), 'i') })
+    const item = page.getByRole('menuitem', { name: new RegExp(`^${what.replace('Add ', '')}…`, 'i') })
     if (await item.isVisible()) await item.click()
     await page.getByRole('dialog').getByRole('textbox').fill(list.join('\n'))
     await page.keyboard.press('Control+Enter')
