@@ -8,8 +8,11 @@ export type WriteResult =
   | { id: string; ok: false; code: 'conflict'; conflicts: ChangeConflict[] }
   | { id: string; ok: false; code: 'rejected'; problems: RecordProblem[] | 'idReused' }
 
-/** `wait`: try again later. `stop`: sending again will not help until the person does something. */
-export type ApiFailure = { ok: false; kind: 'wait' | 'stop'; what: string }
+/**
+ * `wait`: try again later. `stop`: sending again will not help until the person does something. `signedOut`, `noAccess`:
+ * the book is not open to this person now, so nothing more is edited here.
+ */
+export type ApiFailure = { ok: false; kind: 'wait' | 'stop' | 'signedOut' | 'noAccess'; what: string }
 export type ApiAnswer<T> = { ok: true; value: T } | ApiFailure
 
 export type BookApi = {
@@ -35,9 +38,10 @@ async function call<T>(url: string, init?: RequestInit): Promise<ApiAnswer<T>> {
   if (response.status === 401)
     return {
       ok: false,
-      kind: 'stop',
-      what: 'You are signed out. Sign in again in another tab; your edits are kept in this browser.',
+      kind: 'signedOut',
+      what: 'You are signed out, so nothing can be edited here now. Sign in again, here or in another tab.',
     }
+  if (response.status === 403 || response.status === 404) return { ok: false, kind: 'noAccess', what: noAccess(message) }
   if (response.status === 429 || response.status >= 500)
     return {
       ok: false,
@@ -46,6 +50,9 @@ async function call<T>(url: string, init?: RequestInit): Promise<ApiAnswer<T>> {
     }
   return { ok: false, kind: 'stop', what: message ?? 'The server refused the edits. They are kept in this browser.' }
 }
+
+const noAccess = (message: string | undefined) =>
+  `Your access to this book has ended or is less than it was, so nothing can be edited here now. ${message ?? 'Ask an owner of the team.'}`
 
 export function bookApi(bookId: string): BookApi {
   const base = `/api/books/${encodeURIComponent(bookId)}`

@@ -7,6 +7,8 @@ export type SaveStatus =
   | { status: 'saved' }
   | { status: 'saving'; waiting: number }
   | { status: 'offline'; waiting: number; what: string }
+  /** The book is not open to this person any more, or they are signed out: nothing is edited until it is again. */
+  | { status: 'ended'; waiting: number; why: 'signedOut' | 'noAccess'; what: string }
   /** Someone else changed a field first. The change is kept until the person chooses. */
   | { status: 'conflict'; change: Change; conflicts: ChangeConflict[]; dropMine: () => void; keepMine: () => void }
   /** The server refused the change; it has been taken back and is kept here to be read. */

@@ -11,6 +11,9 @@ import type { EditQueue } from './edit-queue'
 
 export type BookSnapshot = { state: BookState; number: number; save: SaveStatus }
 
+type End = ApiFailure & { kind: 'signedOut' | 'noAccess' }
+const isEnd = (failure: ApiFailure): failure is End => failure.kind === 'signedOut' || failure.kind === 'noAccess'
+
 const BATCH = 40
 const FIRST_WAIT = 500
 const LONGEST_WAIT = 30_000
@@ -24,6 +27,8 @@ export class BookStore {
   private snapshot: BookSnapshot
   private readonly listeners = new Set<() => void>()
   private failure: ApiFailure | null = null
+  /** Why the book cannot be read any more, as the last look at it was told. */
+  private ended: End | null = null
   private rejected: Extract<SaveStatus, { status: 'rejected' }> | null = null
   private sending = false
   private wait = FIRST_WAIT
@@ -62,6 +67,8 @@ export class BookStore {
 
   /** Applies and queues a change, or says in a sentence why it cannot stand. */
   edit = (change: Change): string | null => {
+    const closed = this.closed()
+    if (closed) return closed.what
     const added = addPending(this.overlay, change)
     if (!added.ok) return conflictsText(this.overlay.shown, added.conflicts)
     const problems = check(added.overlay.shown, change)
@@ -79,6 +86,7 @@ export class BookStore {
   catchUp = async (): Promise<number> => {
     for (;;) {
       const answer = await this.api.changesAfter(this.overlay.number)
+      this.note(answer.ok ? null : answer)
       if (!answer.ok) return this.overlay.number
       const next = receive(this.overlay, answer.value.changes)
       if (!next) return this.reload()
@@ -93,6 +101,22 @@ export class BookStore {
     clearTimeout(this.timer)
     this.wait = FIRST_WAIT
     void this.pump()
+  }
+
+  /** What a look at the book was told. Let in again, what waits is sent. */
+  private note(failure: ApiFailure | null): void {
+    const was = this.ended
+    // A line that is down says nothing about who may read the book.
+    if (failure === null) this.ended = null
+    else if (isEnd(failure)) this.ended = failure
+    if (was?.what === this.ended?.what) return
+    this.set(this.overlay)
+    if (was && !this.ended) this.retry()
+  }
+
+  /** The refusal that ended editing here, if one did. */
+  private closed(): End | null {
+    return this.ended ?? (this.failure && isEnd(this.failure) ? this.failure : null)
   }
 
   private async reload(): Promise<number> {
@@ -193,6 +217,8 @@ export class BookStore {
 
   private status(): SaveStatus {
     const { broken, pending } = this.overlay
+    const closed = this.closed()
+    if (closed) return { status: 'ended', waiting: pending.length, why: closed.kind, what: closed.what }
     if (broken) {
       const { change, conflicts } = broken
       return {

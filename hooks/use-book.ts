@@ -68,5 +68,5 @@ export function useBook(book: OpenedBook, onRefused: (sentence: string) => void)
     },
     [store, remember, book.mayEdit],
   )
-  return { state, mayEdit: book.mayEdit, save, edit, history }
+  return { state, mayEdit: book.mayEdit && save.status !== 'ended', save, edit, history }
 }

@@ -12,7 +12,8 @@ const isEditor = (target: EventTarget | null) => target instanceof Element && ta
 export function useGridMouse(source: GridSource, cursor: GridCursor, pane: RefObject<HTMLElement | null>) {
   const latest = useRef({ source, cursor })
   latest.current = { source, cursor }
-  const drag = useRef<{ from: GridPlace; moved: boolean; extend: boolean } | null>(null)
+  const drag = useRef<{ from: GridPlace; moved: boolean } | null>(null)
+  const pressedTwice = useRef(false)
 
   useEffect(() => {
     const stop = () => {
@@ -31,8 +32,10 @@ export function useGridMouse(source: GridSource, cursor: GridCursor, pane: RefOb
       // An open editor loses the focus first, and so takes what was typed.
       const focused = document.activeElement
       if (focused instanceof HTMLInputElement && pane.current?.contains(focused)) focused.blur()
+      const { active } = cursor.selection
+      pressedTwice.current = active.row === place.row && active.column === place.column
       cursor.select(place, event.shiftKey)
-      drag.current = { from: place, moved: false, extend: event.shiftKey }
+      drag.current = { from: place, moved: false }
     },
     [pane],
   )
@@ -48,8 +51,11 @@ export function useGridMouse(source: GridSource, cursor: GridCursor, pane: RefOb
     const place = placeOf(event.target)
     if (!place || isEditor(event.target) || event.shiftKey) return
     const { source, cursor } = latest.current
-    if (!cursor.isOne) return
-    source.activate?.(place, 'click')
+    if (!cursor.isOne || source.activate?.(place, 'click')) return
+    // A finger has no keys and no double press: a second tap on the chosen cell types into it.
+    const touch = (event.nativeEvent as PointerEvent).pointerType === 'touch'
+    if (touch && pressedTwice.current && source.mayEdit(place))
+      cursor.setEdit({ place, draft: source.editText(place), mode: 'edit', reason: null })
   }, [])
   const onDoubleClick = useCallback((event: MouseEvent) => {
     const place = placeOf(event.target)

@@ -13,7 +13,7 @@ import { BooksToolbar } from './books-toolbar'
 import { NoBooks } from './no-books'
 import { ProjectMenu } from './project-menu'
 import type { BookRow, BooksActions, ProjectRow } from './types'
-import { useAction } from './use-action'
+import { useAction } from '@/components/ui/use-action'
 
 export type BooksViewProps = {
   team: { slug: string; name: string; role: string }

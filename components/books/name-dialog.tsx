@@ -5,7 +5,7 @@ import { Button } from '@/components/ui/button'
 import { Dialog, DialogActions } from '@/components/ui/dialog'
 import { Field, Input } from '@/components/ui/field'
 import type { Result } from '@/lib/errors'
-import { useAction } from './use-action'
+import { useAction } from '@/components/ui/use-action'
 
 export type NameDialogProps = {
   title: string

@@ -10,7 +10,7 @@ import { type Basis, FlowUnitSelect } from './flow-unit-select'
 import { StartChoice } from './start-choice'
 import { starters } from './starters'
 import type { BooksActions, NewBook, ProjectRow, StarterId } from './types'
-import { useAction } from './use-action'
+import { useAction } from '@/components/ui/use-action'
 
 type NewBookDialogProps = {
   projects: readonly ProjectRow[]

@@ -62,7 +62,10 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
       aria-readonly={props.role === 'gridcell' && props.readOnly ? true : undefined}
       aria-invalid={mark === 'wrong' ? true : undefined}
       aria-expanded={props.expanded}
-      title={props.description}
+      title={
+        props.description ??
+        (tone === 'name' || tone === 'label' ? [text, props.aside].filter(Boolean).join(', ') : undefined)
+      }
       tabIndex={props.tabStop ? 0 : -1}
       className={classNames(
         'grid-cell',

@@ -129,7 +129,7 @@ export function BenchBody(props: BenchBodyProps) {
       {narrow ? (
         <>
           <Button className="flex-none justify-between" onClick={() => setCardOpen(true)}>
-            <span className="truncate">
+            <span className="truncate leading-normal">
               {(shown.pane === 'table' ? props.table : props.links).view(shown.place).label}
             </span>
             <ChevronUp className="size-4" aria-hidden="true" />

@@ -1,11 +1,11 @@
 import type { SolvedCase } from '@/hooks/solver-handle'
 import { type BookUnits, bookUnits } from '@/lib/balance/measure/units-of-measure'
-import type { CellQuantity, Diagnostic } from '@/lib/balance/solution'
+import type { Diagnostic } from '@/lib/balance/solution'
 import type { CaseId, ComponentId, StreamId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 import { type BookState, bookOf, inOrder } from '@/lib/book/state'
 import type { DecimalSign } from '@/lib/sheet/read-number'
-import { cellQuantityOf } from './rows'
+import { type RowQuantity, rowQuantityOf } from './rows'
 
 type Given = RecordOf<'given'>
 
@@ -30,11 +30,8 @@ export type BookView = {
   leftOut: ReadonlyMap<string, string>
 }
 
-export const cellKey = (
-  stream: StreamId,
-  quantity: CellQuantity | 'volumeFlow',
-  component: ComponentId | null,
-): string => `${stream}|${quantity}|${component ?? ''}`
+export const cellKey = (stream: StreamId, quantity: RowQuantity, component: ComponentId | null): string =>
+  `${stream}|${quantity}|${component ?? ''}`
 
 export function bookView(
   state: BookState,
@@ -47,7 +44,7 @@ export function bookView(
   const givensAt = new Map<string, Given[]>()
   for (const given of state.given.values()) {
     if (given.caseId !== caseId) continue
-    const quantity = cellQuantityOf(given.quantity, book.basis) ?? 'volumeFlow'
+    const quantity = rowQuantityOf(given.quantity, book.basis)
     const key = cellKey(given.streamId, quantity, given.componentId)
     const list = givensAt.get(key)
     if (!list) givensAt.set(key, [given])
@@ -90,7 +87,7 @@ export function bookView(
 }
 
 /** The unit that a row shows its values in, as written for people and as the solver's units know it. */
-export function rowUnit(view: BookView, quantity: CellQuantity): { shown: string; symbol: string } {
+export function rowUnit(view: BookView, quantity: RowQuantity): { shown: string; symbol: string } {
   const { basis, flowUnit } = view.book
   const ownIsMass = basis === 'mass'
   switch (quantity) {
@@ -101,6 +98,10 @@ export function rowUnit(view: BookView, quantity: CellQuantity): { shown: string
       return { shown: ownIsMass ? 'wt %' : 'mol %', symbol: '%' }
     case 'otherFraction':
       return { shown: ownIsMass ? 'mol %' : 'wt %', symbol: '%' }
+    case 'volumeFlow': {
+      const symbol = view.units?.volume.symbol ?? ''
+      return { shown: symbol.replace('m3', 'm³'), symbol }
+    }
     default: {
       const symbol = (ownIsMass ? view.units?.mole : view.units?.mass)?.symbol ?? ''
       return { shown: symbol, symbol }
@@ -108,5 +109,4 @@ export function rowUnit(view: BookView, quantity: CellQuantity): { shown: string
   }
 }
 
-export const isFraction = (quantity: CellQuantity): boolean => quantity === 'fraction' || quantity === 'otherFraction'
-export const wantsComponent = (quantity: CellQuantity): boolean => quantity !== 'flow' && quantity !== 'otherFlow'
+export const isFraction = (quantity: RowQuantity): boolean => quantity === 'fraction' || quantity === 'otherFraction'

@@ -1,4 +1,4 @@
-import { CellFlag, type CellQuantity, CellState, slotOf } from '@/lib/balance/solution'
+import { CellFlag, CellState, slotOf } from '@/lib/balance/solution'
 import { absenceId, type ComponentId, type StreamId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 import { bookUnitOf, convert } from '@/lib/book/units'
@@ -6,6 +6,7 @@ import { bookUnitOf, convert } from '@/lib/book/units'
 import { entryMeasure, readEntry } from '@/lib/sheet/entry'
 import { formatNumber } from '@/lib/sheet/format'
 import { type BookView, cellKey, isFraction, rowUnit } from './book-view'
+import type { RowQuantity } from './rows'
 
 export type ReadState =
   | 'given'
@@ -36,7 +37,7 @@ export type Reading = {
 /** Half a unit in the last typed digit, and the value, in the row's unit. */
 function inRow(
   view: BookView,
-  quantity: CellQuantity,
+  quantity: RowQuantity,
   given: RecordOf<'given'>,
 ): { value: number; halfWidth: number | null } | null {
   if (given.value === null) return null
@@ -54,7 +55,7 @@ function inRow(
 export function readCell(
   view: BookView,
   streamId: StreamId,
-  quantity: CellQuantity,
+  quantity: RowQuantity,
   componentId: ComponentId | null,
 ): Reading {
   const { solved, state } = view
@@ -64,6 +65,7 @@ export function readCell(
   const nothing: Reading = { state: 'unknown', value: null, given, others, flags: 0, slot: null, reason: null }
   if (componentId !== null && state.absence.has(absenceId(streamId, componentId)))
     return { ...nothing, state: 'absent', reason: given ? (view.leftOut.get(given.id) ?? null) : null }
+  if (quantity === 'volumeFlow') return readVolume(view, streamId, nothing)
   const stream = solved?.streamIndex.get(streamId)
   const component = componentId === null ? 0 : solved?.componentIndex.get(componentId)
   const slot =
@@ -99,10 +101,25 @@ export function readCell(
   return { ...nothing, state: kept ?? 'unknown', slot }
 }
 
+/** A volume flow: typed, or mass over density where both are known. It is no cell of the solver's arrays. */
+function readVolume(view: BookView, streamId: StreamId, nothing: Reading): Reading {
+  const { given } = nothing
+  if (given && given.use === 'given') {
+    const refused = given.value === null ? reasonOf(view, 'volumeFlow', given) : view.leftOut.get(given.id)
+    if (refused !== undefined) return { ...nothing, state: 'wrong', reason: refused }
+    return { ...nothing, state: 'given', value: inRow(view, 'volumeFlow', given)?.value ?? null }
+  }
+  const density = view.state.stream.get(streamId)?.density ?? null
+  if (density === null) return { ...nothing, state: 'missing', reason: 'The density of the stream is not known.' }
+  const mass = readCell(view, streamId, view.book.basis === 'mass' ? 'flow' : 'otherFlow', null)
+  const kilograms = mass.value === null || !view.units ? null : mass.value * view.units.mass.factor
+  return kilograms === null ? nothing : { ...nothing, state: 'solvable', value: kilograms / density, flags: mass.flags }
+}
+
 /** A given that the newest answer counts as given was taken, whatever an older list says. */
 const isStaleRefusal = (found: CellState): boolean => found === CellState.given || found === CellState.atOdds
 
-function reasonOf(view: BookView, quantity: CellQuantity, given: RecordOf<'given'>): string {
+function reasonOf(view: BookView, quantity: RowQuantity, given: RecordOf<'given'>): string {
   const entry = readEntry(given.text, {
     measure: entryMeasure(given.quantity, view.book.basis),
     unit: rowUnit(view, quantity).symbol,
@@ -112,7 +129,7 @@ function reasonOf(view: BookView, quantity: CellQuantity, given: RecordOf<'given
 }
 
 /** The number as the row prints it. */
-export function shownNumber(view: BookView, quantity: CellQuantity, reading: Reading, extraDigits = 0): string {
+export function shownNumber(view: BookView, quantity: RowQuantity, reading: Reading, extraDigits = 0): string {
   if (reading.value === null) return ''
   const { decimal } = view
   const style = isFraction(quantity) ? 'percent' : 'flow'

@@ -21,6 +21,8 @@ export type Desk = {
   offer: (offer: Offer) => void
   openMenu: (menu: { pane: 'table' | 'links'; place: GridPlace; at: { x: number; y: number } }) => void
   openDialog: (dialog: DialogRequest) => void
+  /** Brings the cursor of a pane to a place. */
+  show: (pane: 'table' | 'links', place: GridPlace) => void
 }
 
 export type DialogRequest =

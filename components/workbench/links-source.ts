@@ -135,16 +135,17 @@ function linkCell(view: BookView, { row, column }: GridPlace): CellView {
 }
 
 function unitHead(view: BookView, unit: RecordOf<'unit'>): CellView {
-  const troubles = view.unitTroubles.get(unit.id) ?? []
-  const label = `Unit ${unit.tag}${unit.name ? `, ${unit.name}` : ''}`
-  if (troubles.length === 0) return { text: unit.tag, label, tone: 'label', ...(unit.name ? { aside: unit.name } : {}) }
+  const troubles = (view.unitTroubles.get(unit.id) ?? []).filter(({ severity }) => severity !== 'note')
+  const name = unit.name === unit.tag ? '' : unit.name
+  const label = `Unit ${unit.tag}${name ? `, ${name}` : ''}`
+  if (troubles.length === 0) return { text: unit.tag, label, tone: 'label', ...(name ? { aside: name } : {}) }
   const words = troubles.map(({ code }) => shortly[code]).filter((word) => word !== undefined)
   return {
     text: unit.tag,
     label: words.length > 0 ? `${label}: ${words.join(', ')}` : label,
     tone: 'label',
     mark: 'broken',
-    aside: words.length > 0 ? words.join(', ') : unit.name,
+    aside: words.length > 0 ? words.join(', ') : name,
     description: troubles.map(({ text }) => text).join(' '),
   }
 }

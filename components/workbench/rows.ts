@@ -7,22 +7,25 @@ export type SectionKey = 'fraction' | 'componentFlow' | 'otherFraction' | 'other
 
 export type StreamField = 'tag' | 'name' | 'from' | 'to' | 'phase' | 'density' | 'temperature' | 'pressure'
 
+/** What a row of values shows: a cell of the solver's arrays, or the volume flow that follows from a density. */
+export type RowQuantity = CellQuantity | 'volumeFlow'
+
 /** What a row of the stream table shows. Its id is written from it, so that an id can be read back. */
 export type RowRef =
   | { kind: 'field'; field: StreamField }
   | { kind: 'section'; section: SectionKey }
-  | { kind: 'value'; quantity: CellQuantity; componentId: ComponentId | null }
+  | { kind: 'value'; quantity: RowQuantity; componentId: ComponentId | null }
 
 const fields: readonly StreamField[] = ['tag', 'name', 'from', 'to', 'phase', 'density', 'temperature', 'pressure']
 
-export const valueRow = (quantity: CellQuantity, componentId: ComponentId | null = null): string =>
+export const valueRow = (quantity: RowQuantity, componentId: ComponentId | null = null): string =>
   `value/${quantity}/${componentId ?? ''}`
 export const sectionRow = (section: SectionKey): string => `section/${section}`
 
 export function readRow(id: string): RowRef | null {
   const [kind, what = '', componentId = ''] = id.split('/')
   if (kind === 'section') return { kind, section: what as SectionKey }
-  if (kind === 'value') return { kind, quantity: what as CellQuantity, componentId: componentId || null }
+  if (kind === 'value') return { kind, quantity: what as RowQuantity, componentId: componentId || null }
   const field = fields.find((name) => name === id)
   return field ? { kind: 'field', field } : null
 }
@@ -32,11 +35,12 @@ export type Quantity = Given['quantity']
 type Basis = RecordOf<'book'>['basis']
 
 /** The quantity that a value typed into a row is kept as. */
-export function quantityOf(quantity: CellQuantity, basis: Basis): Quantity {
+export function quantityOf(quantity: RowQuantity, basis: Basis): Quantity {
   const mass = basis === 'mass'
   switch (quantity) {
     case 'flow':
     case 'componentFlow':
+    case 'volumeFlow':
       return quantity
     case 'fraction':
       return mass ? 'massFraction' : 'moleFraction'
@@ -49,8 +53,8 @@ export function quantityOf(quantity: CellQuantity, basis: Basis): Quantity {
   }
 }
 
-/** The row that a given stands in; null for one with no row in this table. */
-export function cellQuantityOf(quantity: Quantity, basis: Basis): CellQuantity | null {
+/** The row that a given stands in. */
+export function rowQuantityOf(quantity: Quantity, basis: Basis): RowQuantity {
   const mass = basis === 'mass'
   switch (quantity) {
     case 'flow':
@@ -69,12 +73,12 @@ export function cellQuantityOf(quantity: Quantity, basis: Basis): CellQuantity |
     case 'moleFraction':
       return mass ? 'otherFraction' : 'fraction'
     case 'volumeFlow':
-      return null
+      return quantity
   }
 }
 
 /** Heads as reports print them. */
-export function rowTitle(quantity: CellQuantity, basis: Basis): string {
+export function rowTitle(quantity: RowQuantity, basis: Basis): string {
   const [own, other] = basis === 'mass' ? ['Mass', 'Mole'] : ['Mole', 'Mass']
   switch (quantity) {
     case 'flow':
@@ -89,6 +93,8 @@ export function rowTitle(quantity: CellQuantity, basis: Basis): string {
       return `Component ${other.toLowerCase()} flow`
     case 'otherFraction':
       return `${other} fraction`
+    case 'volumeFlow':
+      return 'Volume flow'
   }
 }
 

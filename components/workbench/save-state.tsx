@@ -1,12 +1,15 @@
 'use client'
 
-import { Check, CloudOff, LoaderCircle, TriangleAlert } from 'lucide-react'
+import { Check, CloudOff, LoaderCircle, Lock, TriangleAlert } from 'lucide-react'
+import Link from 'next/link'
+import { usePathname } from 'next/navigation'
 import type { ReactNode } from 'react'
-import { Button } from '@/components/ui/button'
+import { Button, buttonClasses } from '@/components/ui/button'
 import type { SaveStatus } from '@/hooks/book-handle'
 import type { ChangeConflict } from '@/lib/book/change'
+import { conflictText } from '@/lib/book/conflict-text'
 import { counted } from '@/lib/book/edits/draft'
-import { kindNames } from '@/lib/book/kinds'
+import type { BookState } from '@/lib/book/state'
 
 /** How far the unsent edits are, always in sight. */
 export function SaveState({ save, kept }: { save: SaveStatus; kept: string }) {
@@ -21,6 +24,12 @@ export function SaveState({ save, kept }: { save: SaveStatus; kept: string }) {
       return (
         <Line icon={<CloudOff className="size-4 text-given-edge" />} title={save.what}>
           Offline: {counted(save.waiting, 'change')} waiting here
+        </Line>
+      )
+    case 'ended':
+      return (
+        <Line icon={<Lock className="size-4 text-odds-edge" />}>
+          {save.why === 'signedOut' ? 'Signed out' : 'No longer open to you'}
         </Line>
       )
     default:
@@ -42,15 +51,14 @@ function Line({ icon, title, children }: { icon: ReactNode; title?: string; chil
 }
 
 /** A conflict or a refusal, with both values and what can be done. */
-export function SaveTrouble({ save }: { save: SaveStatus }) {
+export function SaveTrouble({ save, state }: { save: SaveStatus; state: BookState }) {
+  if (save.status === 'ended') return <Ended save={save} />
   if (save.status === 'conflict')
     return (
       <Trouble title={`Someone else changed this first, so “${save.change.label}” is not saved yet.`}>
         <ul className="mt-1 grid gap-0.5">
-          {save.conflicts.slice(0, 6).map((conflict) => (
-            <li key={`${conflict.kind}/${conflict.id}/${conflict.code === 'field' ? conflict.field : ''}`}>
-              {conflictWords(conflict)}
-            </li>
+          {conflictLines(state, save.conflicts).map((line) => (
+            <li key={line}>{line}</li>
           ))}
         </ul>
         <div className="mt-2 flex flex-wrap gap-2">
@@ -83,6 +91,30 @@ export function SaveTrouble({ save }: { save: SaveStatus }) {
   return null
 }
 
+/** Who was let go, or signed out, meanwhile: what is shown stays to be read, and nothing more is edited. */
+function Ended({ save }: { save: Extract<SaveStatus, { status: 'ended' }> }) {
+  const pathname = usePathname()
+  const [text, href] =
+    save.why === 'signedOut'
+      ? ['Sign in', `/sign-in?next=${encodeURIComponent(pathname)}`]
+      : ['Go to your books', '/home']
+  return (
+    <Trouble title={save.what}>
+      {save.waiting > 0 ? (
+        <p>
+          {counted(save.waiting, 'change')} could not be sent, and {save.waiting === 1 ? 'is' : 'are'} kept in this
+          browser.
+        </p>
+      ) : null}
+      <div className="mt-2">
+        <Link href={href} prefetch={false} className={buttonClasses('plain', 'small')}>
+          {text}
+        </Link>
+      </div>
+    </Trouble>
+  )
+}
+
 function Trouble({ title, children }: { title: string; children: ReactNode }) {
   return (
     <section role="alert" className="rounded-sheet border border-odds-edge bg-odds px-4 py-3 text-ink">
@@ -92,10 +124,12 @@ function Trouble({ title, children }: { title: string; children: ReactNode }) {
   )
 }
 
-function conflictWords(conflict: ChangeConflict): string {
-  const what = kindNames[conflict.kind]
-  if (conflict.code === 'gone') return `The ${what} is no longer in the book.`
-  if (conflict.code === 'exists') return `There is already a ${what} at this place.`
-  const show = (value: unknown) => (value === null || value === undefined || value === '' ? 'nothing' : String(value))
-  return `${conflict.field} of a ${what}: you wrote ${show(conflict.mine)}, they wrote ${show(conflict.theirs)}; it was ${show(conflict.from)}.`
+const MOST = 6
+
+/** One sentence for each thing that differs; what a number is read from speaks for the number. */
+function conflictLines(state: BookState, conflicts: readonly ChangeConflict[]): string[] {
+  const hasText = new Set(conflicts.flatMap((one) => (one.code === 'field' && one.field === 'text' ? [one.id] : [])))
+  const told = conflicts.filter((one) => one.code !== 'field' || one.field === 'text' || !hasText.has(one.id))
+  const lines = [...new Set(told.map((conflict) => conflictText(state, conflict)))]
+  return lines.length > MOST ? [...lines.slice(0, MOST), `And ${lines.length - MOST} more.`] : lines
 }

@@ -1,12 +1,13 @@
 import type { CellTone, CellView, GridPlace, GridRow } from '@/hooks/grid-model'
 import { NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
-import { type CellQuantity, CellState } from '@/lib/balance/solution'
+import { CellState } from '@/lib/balance/solution'
 import { linkId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 import { type BookView, rowUnit } from './book-view'
 import { flagWords, isDoubtful, type ReadState, readCell, shownNumber, stateWords } from './cell-reading'
 import {
   fieldTitle,
+  type RowQuantity,
   type RowRef,
   readRow,
   rowTitle,
@@ -29,7 +30,7 @@ export function tableRows(view: BookView, open: ReadonlySet<SectionKey>): GridRo
     rows.push({ id: sectionRow(key), size: 24, section: { open: open.has(key) } })
     if (open.has(key)) rows.push(...under())
   }
-  const each = (quantity: CellQuantity) => () =>
+  const each = (quantity: RowQuantity) => () =>
     view.components.map(({ id }) => ({ id: valueRow(quantity, id), size: 27 }))
   if (view.components.length > 0) {
     section('fraction', each('fraction'))
@@ -39,7 +40,9 @@ export function tableRows(view: BookView, open: ReadonlySet<SectionKey>): GridRo
       section('otherComponentFlow', () => [{ id: valueRow('otherFlow'), size: 27 }, ...each('otherComponentFlow')()])
     }
   }
-  section('carried', () => ['phase', 'density', 'temperature', 'pressure'].map((id) => ({ id, size: 25 })))
+  section('carried', () =>
+    ['phase', 'density', valueRow('volumeFlow'), 'temperature', 'pressure'].map((id) => ({ id, size: 25 })),
+  )
   return rows
 }
 
@@ -120,7 +123,7 @@ function fieldCell(view: BookView, field: StreamField, stream: RecordOf<'stream'
     }
   }
   if (field === 'tag') {
-    const troubles = view.streamTroubles.get(stream.id) ?? []
+    const troubles = (view.streamTroubles.get(stream.id) ?? []).filter(({ severity }) => severity !== 'note')
     const said = troubles.map(({ text }) => text).join(' ')
     return {
       text: stream.tag,
@@ -149,7 +152,7 @@ const toneOf: Record<ReadState, CellTone> = {
 function valueCell(
   view: BookView,
   stream: RecordOf<'stream'>,
-  quantity: CellQuantity,
+  quantity: RowQuantity,
   componentId: string | null,
 ): CellView {
   const reading = readCell(view, stream.id, quantity, componentId)

@@ -5,12 +5,18 @@ import { notifyProblem } from '@/components/ui/toast'
 import { type OpenedBook, useBook } from '@/hooks/use-book'
 import { useSolver } from '@/hooks/use-solver'
 import { inOrder } from '@/lib/book/state'
+import type { DecimalChoice } from './use-reader'
 import { Workbench } from './workbench'
 
-type TeamBenchProps = { opened: OpenedBook; crumb: { label: string; href: string }; readOnly: string | null }
+type TeamBenchProps = {
+  opened: OpenedBook
+  crumb: { label: string; href: string }
+  readOnly: string | null
+  decimal: DecimalChoice
+}
 
 /** A book kept on the server, at work. */
-export function TeamBench({ opened, crumb, readOnly }: TeamBenchProps) {
+export function TeamBench({ opened, crumb, readOnly, decimal }: TeamBenchProps) {
   const book = useBook(opened, notifyProblem)
   const [caseId] = useState(() => inOrder(book.state.case)[0]?.id ?? '')
   const solver = useSolver(book.state, caseId)
@@ -19,6 +25,7 @@ export function TeamBench({ opened, crumb, readOnly }: TeamBenchProps) {
       book={book}
       solver={solver}
       caseId={caseId}
+      decimal={decimal}
       crumb={crumb}
       downloadHref={`/api/books/${opened.id}/table.xlsx`}
       {...(readOnly === null ? {} : { readOnly })}

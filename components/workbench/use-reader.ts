@@ -3,8 +3,15 @@ import type { DecimalSign } from '@/lib/sheet/read-number'
 
 const never = () => () => {}
 
-/** The decimal sign of the person's own language; the server, which cannot know it, writes a point. */
-export const useDecimal = (): DecimalSign =>
+export type DecimalChoice = DecimalSign | 'own'
+
+/** The decimal sign that the team chose, or else of the person's own language, which the server cannot know. */
+export function useDecimal(choice: DecimalChoice): DecimalSign {
+  const own = useOwnDecimal()
+  return choice === 'own' ? own : choice
+}
+
+const useOwnDecimal = (): DecimalSign =>
   useSyncExternalStore(
     never,
     () => (new Intl.NumberFormat(navigator.language).format(0.5).includes(',') ? 'comma' : 'point'),

@@ -1,11 +1,11 @@
 import type { Place } from '@/lib/balance/solution'
 import type { BookView } from './book-view'
-import { cellQuantityOf, rowTitle } from './rows'
+import { rowQuantityOf, rowTitle } from './rows'
 
 /** "total flow of 101", "mass fraction of Sodium chloride in 108"; places of the solver name things by tag. */
 export function placeWords(view: BookView, place: Place): string {
-  const cell = cellQuantityOf(place.quantity, view.book.basis)
-  const title = (cell ? rowTitle(cell, view.book.basis) : 'Volume flow').toLowerCase()
+  const { basis } = view.book
+  const title = rowTitle(rowQuantityOf(place.quantity, basis), basis).toLowerCase()
   const by = place.instrument && place.instrument !== 'main' ? ` by ${place.instrument}` : ''
   if (place.component === undefined) return `${title} of ${place.stream}${by}`
   const component = view.components.find(({ tag }) => tag.trim() === place.component)

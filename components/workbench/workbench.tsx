@@ -1,12 +1,12 @@
 'use client'
 
-import { type KeyboardEvent, useMemo, useRef, useState } from 'react'
+import { type KeyboardEvent, useEffect, useMemo, useRef, useState } from 'react'
 import { cellId } from '@/components/grid/grid-row'
 import { PointMenu } from '@/components/grid/point-menu'
 import { Caution } from '@/components/ui/caution'
 import { notifyProblem } from '@/components/ui/toast'
 import type { BookHandle } from '@/hooks/book-handle'
-import { NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
+import { type GridPlace, NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
 import type { SolverHandle } from '@/hooks/solver-handle'
 import { useGridCursor } from '@/hooks/use-grid-cursor'
 import { inOrder } from '@/lib/book/state'
@@ -19,13 +19,13 @@ import { linksRows, linksSource } from './links-source'
 import { OfferNote } from './offer-note'
 import type { PanelKey } from './panel-tabs'
 import { PlaceMenu } from './place-menu'
-import { goToNextRegion } from './regions'
+import { backToCell, goToNextRegion } from './regions'
 import { type SectionKey, valueRow } from './rows'
 import { SaveTrouble } from './save-state'
 import { Strip } from './strip'
 import { tableRows } from './table-cells'
 import { tableSource } from './table-source'
-import { useDecimal } from './use-reader'
+import { type DecimalChoice, useDecimal } from './use-reader'
 import { useWave } from './use-wave'
 
 export type WorkbenchProps = {
@@ -37,6 +37,8 @@ export type WorkbenchProps = {
   kept?: string
   /** Why it cannot be edited, in words, where it cannot. */
   readOnly?: string
+  /** The decimal sign that the team has chosen; left out: that of the person's own language. */
+  decimal?: DecimalChoice
   downloadHref?: string | null
   headerEnd?: React.ReactNode
 }
@@ -45,13 +47,14 @@ const startOpen: ReadonlySet<SectionKey> = new Set(['fraction', 'componentFlow']
 
 /** One book at work: header, strip, sheet, panels and cell card, over any handle of a book. */
 export function Workbench({ book, solver, caseId, crumb = null, kept = 'All changes kept', ...props }: WorkbenchProps) {
-  const decimal = useDecimal()
+  const decimal = useDecimal(props.decimal ?? 'own')
   const [open, setOpen] = useState(startOpen)
   const [panel, setPanel] = useState<PanelKey>('connections')
   const [pane, setPane] = useState<'table' | 'links'>('table')
   const [offer, setOffer] = useState<Offer | null>(null)
   const [menu, setMenu] = useState<Parameters<Desk['openMenu']>[0] | null>(null)
   const [dialog, setDialog] = useState<DialogRequest | null>(null)
+  const [wanted, setWanted] = useState<{ pane: 'table' | 'links'; place: GridPlace } | null>(null)
   const root = useRef<HTMLDivElement>(null)
 
   const view = useMemo(
@@ -71,6 +74,7 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
       offer: setOffer,
       openMenu: setMenu,
       openDialog: setDialog,
+      show: (inPane, place) => setWanted({ pane: inPane, place }),
     }
   }, [book.edit])
 
@@ -103,13 +107,27 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
   const wave = useWave(solver.solved)
   const cursor = pane === 'links' && panel === 'connections' && unitRows.length > 0 ? linksCursor : tableCursor
   const shownPane = cursor === linksCursor ? 'links' : 'table'
-  const showStream = (streamId: string) => {
-    tableCursor.select({ row: 'tag', column: streamId })
-    setPane('table')
-  }
+  // What was just added is on the screen one drawing later: only then can the cursor go there.
+  const selectIn = { table: tableCursor.select, links: linksCursor.select }
+  const select = wanted ? selectIn[wanted.pane] : null
+  useEffect(() => {
+    if (!wanted || !select) return
+    select(wanted.place)
+    setPane(wanted.pane)
+    if (wanted.pane === 'links') setPanel('connections')
+    setWanted(null)
+    backToCell(wanted.pane, true)
+  }, [wanted, select])
 
   const onKeyDown = (event: KeyboardEvent) => {
     if (event.key === 'F6' && root.current && goToNextRegion(root.current, event.shiftKey)) event.preventDefault()
+    const isTyping = event.target instanceof HTMLInputElement || event.target instanceof HTMLTextAreaElement
+    if (event.defaultPrevented || isTyping || !(event.ctrlKey || event.metaKey)) return
+    const key = event.key.toLowerCase()
+    if (key !== 'z' && key !== 'y') return
+    if (key === 'y' || event.shiftKey) book.history.redo()
+    else book.history.undo()
+    event.preventDefault()
   }
   return (
     // biome-ignore lint/a11y/noStaticElementInteractions: F6 goes round the parts from wherever the focus is
@@ -129,7 +147,7 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
         {props.headerEnd}
       </BenchHeader>
       {props.readOnly ? <p className="text-sm text-ink-2">{props.readOnly}</p> : null}
-      <SaveTrouble save={book.save} />
+      <SaveTrouble save={book.save} state={book.state} />
       <Strip
         view={view}
         stale={solver.stale && solver.solved !== null}
@@ -150,7 +168,7 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
         onPanel={setPanel}
         onPane={setPane}
         shown={{ pane: shownPane, place: cursor.selection.active }}
-        onStream={showStream}
+        onStream={(streamId) => desk.show('table', { row: 'tag', column: streamId })}
       />
       <footer>
         <Caution />
@@ -162,7 +180,14 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
           onDone={() => setOffer(null)}
         />
       ) : null}
-      <PointMenu at={menu?.at ?? null} label="Rows and columns" onShut={() => setMenu(null)}>
+      <PointMenu
+        at={menu?.at ?? null}
+        label="Rows and columns"
+        onShut={() => {
+          setMenu(null)
+          backToCell(shownPane)
+        }}
+      >
         {menu ? (
           <PlaceMenu
             pane={menu.pane}
@@ -172,7 +197,15 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
           />
         ) : null}
       </PointMenu>
-      <BenchDialogs request={dialog} view={view} desk={desk} onShut={() => setDialog(null)} />
+      <BenchDialogs
+        request={dialog}
+        view={view}
+        desk={desk}
+        onShut={() => {
+          setDialog(null)
+          backToCell(shownPane)
+        }}
+      />
     </div>
   )
 }

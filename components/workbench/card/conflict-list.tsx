@@ -1,11 +1,11 @@
 'use client'
 
-import type { CellQuantity, Conflict } from '@/lib/balance/solution'
+import type { Conflict } from '@/lib/balance/solution'
 import type { RecordOf } from '@/lib/book/kinds'
 import { bookUnitOf, convert } from '@/lib/book/units'
 import { formatNumber } from '@/lib/sheet/format'
 import { type BookView, isFraction, rowUnit } from '../book-view'
-import { cellQuantityOf } from '../rows'
+import { type RowQuantity, rowQuantityOf } from '../rows'
 import { placeWords, sentence } from '../words'
 import { CardSection } from './card-parts'
 
@@ -15,7 +15,7 @@ const SHOWN = 2
 type ConflictListProps = {
   view: BookView
   stream: RecordOf<'stream'>
-  quantity: CellQuantity
+  quantity: RowQuantity
   component: RecordOf<'component'> | undefined
 }
 
@@ -25,7 +25,7 @@ export function ConflictList({ view, stream, quantity, component }: ConflictList
     conflict.givens.some(
       (place) =>
         place.stream === stream.tag.trim() &&
-        cellQuantityOf(place.quantity, view.book.basis) === quantity &&
+        rowQuantityOf(place.quantity, view.book.basis) === quantity &&
         place.component === component?.tag.trim(),
     ),
   )
@@ -69,9 +69,8 @@ function where({ boundary, stream }: Conflict): string {
 
 /** "typed 24.00, the others imply 23.10 wt %". */
 function numbers(view: BookView, place: Conflict['givens'][number]): string {
-  const cell = cellQuantityOf(place.quantity, view.book.basis)
-  if (!cell) return `typed ${place.typed}, the others imply ${place.implied}`
   const { basis, flowUnit } = view.book
+  const cell = rowQuantityOf(place.quantity, basis)
   const from = bookUnitOf(place.quantity, basis, flowUnit) ?? ''
   const { symbol, shown } = rowUnit(view, cell)
   const style = isFraction(cell) ? 'percent' : 'flow'

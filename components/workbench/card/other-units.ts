@@ -1,8 +1,8 @@
 import { parseFlowUnit } from '@/lib/balance/measure/units-of-measure'
-import type { CellQuantity } from '@/lib/balance/solution'
 import { convert } from '@/lib/book/units'
 import { formatNumber } from '@/lib/sheet/format'
 import { type BookView, isFraction, rowUnit } from '../book-view'
+import type { RowQuantity } from '../rows'
 
 const offered: Record<'mass' | 'mole' | 'volume', string[]> = {
   mass: ['kg/h', 't/h', 't/d', 'kg/s', 'lb/h'],
@@ -16,7 +16,7 @@ const batches: Record<'mass' | 'mole' | 'volume', string[]> = {
 }
 
 /** The same value in other units that people ask for: "10.94 t/h". */
-export function otherUnits(view: BookView, quantity: CellQuantity, value: number): string[] {
+export function otherUnits(view: BookView, quantity: RowQuantity, value: number): string[] {
   const { decimal } = view
   const { symbol } = rowUnit(view, quantity)
   if (isFraction(quantity)) {

@@ -1,7 +1,6 @@
 'use client'
 
 import { Button } from '@/components/ui/button'
-import type { CellQuantity } from '@/lib/balance/solution'
 import { setGivens } from '@/lib/book/edits/givens'
 import { setPresence } from '@/lib/book/edits/presence'
 import { newId } from '@/lib/book/ids'
@@ -10,7 +9,7 @@ import { type BookView, rowUnit } from '../book-view'
 import { flagWords, isDoubtful, type Reading, readCell, shownNumber } from '../cell-reading'
 import { CommitInput } from '../commit-input'
 import type { Desk } from '../desk'
-import { rowTitle, valueRow } from '../rows'
+import { type RowQuantity, rowTitle, valueRow } from '../rows'
 import { readTyped } from '../table-edits'
 import { CardHead, CardSection, StateTag } from './card-parts'
 import { ConflictList } from './conflict-list'
@@ -21,7 +20,7 @@ type ValueCardProps = {
   view: BookView
   desk: Desk
   stream: RecordOf<'stream'>
-  quantity: CellQuantity
+  quantity: RowQuantity
   componentId: string | null
 }
 
@@ -75,6 +74,16 @@ export function ValueCard({ view, desk, stream, quantity, componentId }: ValueCa
           onClick={() => desk.tryRun(setPresence(view.state, [stream.id], [componentId], 'present', newId))}
         >
           Let it be present in {stream.tag}
+        </Button>
+      ) : null}
+      {view.mayEdit && component && reading.state !== 'absent' ? (
+        <Button
+          size="small"
+          look="quiet"
+          className="mt-3 -ms-2"
+          onClick={() => desk.tryRun(setPresence(view.state, [stream.id], [component.id], 'absent', newId))}
+        >
+          {component.tag} cannot be in {stream.tag}
         </Button>
       ) : null}
       {reading.given ? <GivenDetails key={reading.given.id} view={view} desk={desk} given={reading.given} /> : null}

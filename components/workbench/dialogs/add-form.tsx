@@ -4,11 +4,13 @@ import { type FormEvent, useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { DialogActions } from '@/components/ui/dialog'
 import { Field, TextArea } from '@/components/ui/field'
+import { NAME_COLUMN } from '@/hooks/grid-model'
 import { addComponents, addStreams, addUnits } from '@/lib/book/edits/add'
 import { counted, type Edit } from '@/lib/book/edits/draft'
 import { newId } from '@/lib/book/ids'
 import type { BookView } from '../book-view'
 import type { Desk } from '../desk'
+import { valueRow } from '../rows'
 import { readList } from './read-list'
 
 type What = 'stream' | 'component' | 'unit'
@@ -42,9 +44,14 @@ export function AddForm({ view, desk, what, after, onDone }: AddFormProps) {
     event?.preventDefault()
     if (typeof list === 'string') return setReason(list)
     const items = list.length === 0 ? [{}] : list
-    const refused = desk.run(made(view, what, items, after))
-    if (refused) setReason(refused)
-    else onDone()
+    const edit = made(view, what, items, after)
+    const refused = desk.run(edit)
+    if (refused) return setReason(refused)
+    const first = edit.ok ? edit.value.create.find(({ kind }) => kind === what) : undefined
+    if (first && what === 'stream') desk.show('table', { row: 'tag', column: first.id })
+    if (first && what === 'component') desk.show('table', { row: valueRow('fraction', first.id), column: NAME_COLUMN })
+    if (first && what === 'unit') desk.show('links', { row: first.id, column: NAME_COLUMN })
+    onDone()
   }
   const count = typeof list === 'string' ? null : Math.max(1, list.length)
   return (

@@ -30,6 +30,7 @@ export default async function BookPage({ params }: PageProps<'/[team]/books/[boo
         opened={{ id, userId: team.user.id, number, records, mayEdit }}
         crumb={{ label: book.project.name, href: `/${slug}/books` }}
         readOnly={readOnly}
+        decimal={book.settings.decimal}
       />
     </main>
   )
