@@ -4,9 +4,10 @@ import { env } from '@/lib/env'
 import { logger } from '@/lib/http/logger'
 import * as account from './schema/account'
 import * as book from './schema/book'
+import * as settings from './schema/settings'
 import * as team from './schema/team'
 
-const schema = { ...account, ...team, ...book }
+const schema = { ...account, ...team, ...settings, ...book }
 
 /** Kept on globalThis so that reloading a module while developing does not open a second pool. */
 const shared = globalThis as { tallybrookPool?: Pool }

@@ -9,6 +9,8 @@ export const user = pgTable('user', {
   email: text('email').notNull().unique(),
   emailVerified: boolean('email_verified').notNull().default(false),
   image: text('image'),
+  /** Signing in also asks for a code from an authenticator. */
+  twoFactorEnabled: boolean('two_factor_enabled').notNull().default(false),
   createdAt: moment('created_at').notNull().defaultNow(),
   updatedAt: moment('updated_at').notNull().defaultNow(),
 })
@@ -73,4 +75,31 @@ export const rateLimit = pgTable('rate_limit', {
   key: text('key').notNull().unique(),
   count: integer('count').notNull(),
   lastRequest: bigint('last_request', { mode: 'number' }).notNull(),
+})
+
+/** What an authenticator and its owner share, and the backup codes; both encrypted under the server's secret. */
+export const twoFactor = pgTable(
+  'two_factor',
+  {
+    id: text('id').primaryKey(),
+    userId: text('user_id')
+      .notNull()
+      .unique()
+      .references(() => user.id),
+    secret: text('secret').notNull(),
+    backupCodes: text('backup_codes').notNull(),
+    /** A first code was typed: until then signing in asks for none. */
+    verified: boolean('verified').notNull().default(true),
+    failedVerificationCount: integer('failed_verification_count').notNull().default(0),
+    lockedUntil: moment('locked_until'),
+  },
+  (t) => [index('two_factor_secret_idx').on(t.secret)],
+)
+
+/** Tries against one address, wherever they come from; the table above counts by where they come from. */
+export const attempt = pgTable('attempt', {
+  /** What was tried, and a hash of the address. */
+  key: text('key').primaryKey(),
+  count: integer('count').notNull(),
+  since: moment('since').notNull().defaultNow(),
 })

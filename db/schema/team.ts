@@ -1,5 +1,16 @@
 import { sql } from 'drizzle-orm'
-import { check, foreignKey, index, jsonb, pgTable, primaryKey, text, timestamp, unique } from 'drizzle-orm/pg-core'
+import {
+  check,
+  foreignKey,
+  index,
+  jsonb,
+  pgTable,
+  primaryKey,
+  text,
+  timestamp,
+  unique,
+  uniqueIndex,
+} from 'drizzle-orm/pg-core'
 import { user } from './account'
 
 const moment = (name: string) => timestamp(name, { withTimezone: true })
@@ -57,14 +68,23 @@ export const invitation = pgTable(
     inviterId: text('inviter_id')
       .notNull()
       .references(() => user.id),
+    /** Of the token in the newest mail. The token itself is nowhere but in that mail. */
+    tokenHash: text('token_hash').unique(),
+    sentAt: moment('sent_at').notNull().defaultNow(),
     expiresAt: moment('expires_at').notNull(),
+    acceptedBy: text('accepted_by').references(() => user.id),
     createdAt: moment('created_at').notNull().defaultNow(),
   },
   (t) => [
+    // So that its projects can only be of its own team.
+    unique('invitation_team_id_id_key').on(t.teamId, t.id),
+    uniqueIndex('invitation_pending_key').on(t.teamId, t.email).where(sql`${t.status} = 'pending'`),
     index('invitation_team_id_idx').on(t.teamId),
     index('invitation_email_idx').on(t.email),
     check('invitation_role_known', sql`${t.role} in ('owner', 'engineer', 'analyst', 'checker', 'reader')`),
     check('invitation_status_known', sql`${t.status} in ('pending', 'accepted', 'rejected', 'canceled')`),
+    check('invitation_pending_has_token', sql`${t.status} <> 'pending' or ${t.tokenHash} is not null`),
+    check('invitation_accepted_by', sql`(${t.status} = 'accepted') = (${t.acceptedBy} is not null)`),
   ],
 )
 
@@ -112,6 +132,29 @@ export const projectMember = pgTable(
       foreignColumns: [member.teamId, member.userId],
     }),
     index('project_member_team_id_user_id_idx').on(t.teamId, t.userId),
+  ],
+)
+
+/** The projects that an invited analyst or reader will belong to. */
+export const invitationProject = pgTable(
+  'invitation_project',
+  {
+    teamId: text('team_id').notNull(),
+    invitationId: text('invitation_id').notNull(),
+    projectId: text('project_id').notNull(),
+  },
+  (t) => [
+    primaryKey({ name: 'invitation_project_pkey', columns: [t.invitationId, t.projectId] }),
+    foreignKey({
+      name: 'invitation_project_invitation_fk',
+      columns: [t.teamId, t.invitationId],
+      foreignColumns: [invitation.teamId, invitation.id],
+    }),
+    foreignKey({
+      name: 'invitation_project_project_fk',
+      columns: [t.teamId, t.projectId],
+      foreignColumns: [project.teamId, project.id],
+    }),
   ],
 )
 

@@ -17,6 +17,7 @@ import { renameProject } from '@/lib/data/project/rename-project'
 import { getTeam } from '@/lib/data/team/get-team'
 import { listMyTeams } from '@/lib/data/team/list-my-teams'
 import type { Result } from '@/lib/errors'
+import { peopleVerbs } from './verb-table-people'
 import { blank, makeBook, type TestTeam } from './world'
 
 /**
@@ -25,10 +26,16 @@ import { blank, makeBook, type TestTeam } from './world'
  */
 export type VerbRow = {
   may: readonly Role[]
-  /** Writes: a success leaves a trace, a refusal leaves none. */
-  writes: boolean
+  /** A success leaves a trace in the team, or in what is the caller's own; a refusal leaves none. */
+  writes: 'team' | 'own' | 'nothing'
   /** Names a team or a book, so that another team's people are refused. */
   ofTeam: boolean
+  /** What everybody gets who is signed in, whatever their role and team. */
+  answer?: string
+  /** What those get who are signed out; left out: that they are. */
+  signedOut?: string
+  /** What the caller has to have, made before the call. */
+  provide?: (ctx: Context) => Promise<void>
   /** The call, ready to be made by anybody: what it needs in the team is made first. */
   prepare: (at: TestTeam) => Promise<(ctx: Context) => Promise<Result<unknown>>>
 }
@@ -38,58 +45,59 @@ const makers: readonly Role[] = ['owner', 'engineer']
 const openers: readonly Role[] = ['owner', 'engineer', 'checker']
 
 export const verbTable: Record<string, VerbRow> = {
+  ...peopleVerbs,
   'team/list-my-teams': {
     may: everyone,
-    writes: false,
+    writes: 'nothing',
     ofTeam: false,
     prepare: async () => (ctx) => listMyTeams(ctx, {}),
   },
   'team/get-team': {
     may: everyone,
-    writes: false,
+    writes: 'nothing',
     ofTeam: true,
     prepare: async (at) => (ctx) => getTeam(ctx, { team: at.slug }),
   },
   'project/list-projects': {
     may: everyone,
-    writes: false,
+    writes: 'nothing',
     ofTeam: true,
     prepare: async (at) => (ctx) => listProjects(ctx, { team: at.slug }),
   },
   'project/create-project': {
     may: ['owner'],
-    writes: true,
+    writes: 'team',
     ofTeam: true,
     prepare: async (at) => (ctx) => createProject(ctx, { team: at.slug, name: 'Kiln' }),
   },
   'project/rename-project': {
     may: ['owner'],
-    writes: true,
+    writes: 'team',
     ofTeam: true,
     prepare: async (at) => (ctx) => renameProject(ctx, { team: at.slug, project: at.project, name: 'Kiln' }),
   },
   'mail/list-deliveries': {
     may: ['owner'],
-    writes: false,
+    writes: 'nothing',
     ofTeam: true,
     prepare: async (at) => (ctx) => listDeliveries(ctx, { team: at.slug }),
   },
   'book/list-books': {
     may: everyone,
-    writes: false,
+    writes: 'nothing',
     ofTeam: true,
     prepare: async (at) => (ctx) => listBooks(ctx, { team: at.slug }),
   },
   'book/create-book': {
     may: makers,
-    writes: true,
+    writes: 'team',
     ofTeam: true,
     prepare: async (at) => (ctx) =>
       createBook(ctx, { team: at.slug, projectId: at.project, name: 'Kiln', from: blank }),
   },
   'book/duplicate-book': {
     may: makers,
-    writes: true,
+    writes: 'team',
     ofTeam: true,
     prepare: async (at) => {
       const book = await makeBook(at)
@@ -98,7 +106,7 @@ export const verbTable: Record<string, VerbRow> = {
   },
   'book/archive-book': {
     may: makers,
-    writes: true,
+    writes: 'team',
     ofTeam: true,
     prepare: async (at) => {
       const book = await makeBook(at)
@@ -107,7 +115,7 @@ export const verbTable: Record<string, VerbRow> = {
   },
   'book/restore-book': {
     may: makers,
-    writes: true,
+    writes: 'team',
     ofTeam: true,
     prepare: async (at) => {
       const book = await makeBook(at)
@@ -117,7 +125,7 @@ export const verbTable: Record<string, VerbRow> = {
   },
   'book/get-book': {
     may: openers,
-    writes: false,
+    writes: 'nothing',
     ofTeam: true,
     prepare: async (at) => {
       const book = await makeBook(at)
@@ -126,7 +134,7 @@ export const verbTable: Record<string, VerbRow> = {
   },
   'book/export-stream-table': {
     may: openers,
-    writes: false,
+    writes: 'nothing',
     ofTeam: true,
     prepare: async (at) => {
       const book = await makeBook(at)
@@ -135,7 +143,7 @@ export const verbTable: Record<string, VerbRow> = {
   },
   'book/list-changes': {
     may: openers,
-    writes: false,
+    writes: 'nothing',
     ofTeam: true,
     prepare: async (at) => {
       const book = await makeBook(at)
@@ -144,7 +152,7 @@ export const verbTable: Record<string, VerbRow> = {
   },
   'book/write-changes': {
     may: makers,
-    writes: true,
+    writes: 'team',
     ofTeam: true,
     prepare: async (at) => {
       const book = await makeBook(at)

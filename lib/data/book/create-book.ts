@@ -8,14 +8,17 @@ import { ok, type Result } from '@/lib/errors'
 import { note } from '../door/audit'
 import { inTeam } from '../door/enter'
 import { noSuchProject } from '../door/refusals'
+import type { Seat } from '../door/seat'
+import { settingsOf } from '../door/team-settings'
 import { visibleProjects } from '../door/visible-projects'
 import { bookName, flowUnit, recordId, teamSlug } from '../door/words'
 import { contentFrom } from '../records/book-content'
 import { insertBook } from '../records/new-book'
 
+/** `flowUnit` left out: the team's for this basis. */
 const blank = z
-  .strictObject({ kind: z.literal('blank'), basis: z.enum(['mass', 'mole']), flowUnit })
-  .refine(({ basis, flowUnit: unit }) => bookUnits(basis, unit) !== undefined, {
+  .strictObject({ kind: z.literal('blank'), basis: z.enum(['mass', 'mole']), flowUnit: flowUnit.optional() })
+  .refine(({ basis, flowUnit: unit }) => unit === undefined || bookUnits(basis, unit) !== undefined, {
     path: ['flowUnit'],
     message:
       'is not a unit that fits the basis: kg/h, t/d, lb/h and the like by mass; kmol/h, mol/s and the like by mole',
@@ -34,10 +37,17 @@ export function createBook(ctx: Context, given: z.input<typeof input>): Promise<
     const visible = and(visibleProjects(seat), eq(project.id, projectId))
     const [inProject] = await seat.tx.select({ id: project.id }).from(project).where(visible)
     if (!inProject) return noSuchProject()
-    const made = await insertBook(seat, { projectId, ...contentFrom(from, name) })
+    const made = await insertBook(seat, { projectId, ...contentFrom(await withUnit(seat, from), name) })
     if (!made.ok) return made
     const { id } = made.value
     await note(seat, 'book.create', { kind: 'book', id }, { name, projectId, from })
     return ok({ id })
   })
+}
+
+async function withUnit({ tx, team }: Seat, from: z.output<typeof input>['from']) {
+  if (from.kind !== 'blank') return from
+  if (from.flowUnit !== undefined) return { ...from, flowUnit: from.flowUnit }
+  const { massFlowUnit, moleFlowUnit } = await settingsOf(tx, team.id)
+  return { ...from, flowUnit: from.basis === 'mass' ? massFlowUnit : moleFlowUnit }
 }

@@ -5,6 +5,7 @@ import type { BookRecord } from '@/lib/book/kinds'
 import { recordsOf } from '@/lib/book/state'
 import { ok, type Result } from '@/lib/errors'
 import { atBook } from '../door/enter'
+import { type BookSettings, bookSettings, settingsOf } from '../door/team-settings'
 import { recordId, teamSlug } from '../door/words'
 import { stateOfBook } from '../records/load'
 import { stateCache } from '../records/state-cache'
@@ -21,6 +22,8 @@ export type BookSnapshot = {
   role: Role
   mayEdit: boolean
   archived: boolean
+  /** What the team has chosen for how books are shown and judged. */
+  settings: BookSettings
 }
 
 /** Reads a book. Where `team` is given, a book of another team is not found. */
@@ -38,7 +41,9 @@ export function getBook(ctx: Context, given: z.input<typeof input>): Promise<Res
       const archived = book.archivedAt !== null
       const { slug, name } = team
       const mayEdit = !archived && mayDo(role, 'book.edit')
-      return ok({ id, team: { slug, name }, project, number, records: recordsOf(state), role, mayEdit, archived })
+      const records = recordsOf(state)
+      const settings = bookSettings(await settingsOf(tx, team.id))
+      return ok({ id, team: { slug, name }, project, number, records, role, mayEdit, archived, settings })
     },
     { readOnly: true },
   )

@@ -3,6 +3,7 @@ import type { Transaction } from '@/db/client'
 import type { Context } from '@/lib/auth/context'
 import type { Action } from '@/lib/auth/permissions'
 import { failParse, type Result } from '@/lib/errors'
+import { lockTeam } from './lock-team'
 import { signedOut } from './refusals'
 import { type BookSeat, type Seat, seatAtBook, seatInTeam } from './seat'
 import { transact } from './transact'
@@ -39,6 +40,24 @@ export function inTeam<S extends z.ZodType<{ team: string }>, T>(
     return seat.ok ? run(seat.value, parsed) : seat
   }
   return asPerson(ctx, schema, input, work, manner)
+}
+
+/**
+ * For verbs that change who is in a team: one at a time. The caller's role is read once more behind the lock, since who
+ * had it before may just have taken it away.
+ */
+export function inLockedTeam<S extends z.ZodType<{ team: string }>, T>(
+  ctx: Context,
+  action: Action,
+  schema: S,
+  input: unknown,
+  run: (seat: Seat, input: z.output<S>) => Promise<Result<T>>,
+): Promise<Result<T>> {
+  return inTeam(ctx, action, schema, input, async (seat, parsed) => {
+    await lockTeam(seat)
+    const now = await seatInTeam(seat.tx, seat.userId, parsed.team, action)
+    return now.ok ? run(now.value, parsed) : now
+  })
 }
 
 /** For verbs of one book, which `book` of the input names; where `team` is named too, it has to be the book's. */
