@@ -41,7 +41,8 @@ async function call<T>(url: string, init?: RequestInit): Promise<ApiAnswer<T>> {
       kind: 'signedOut',
       what: 'You are signed out, so nothing can be edited here now. Sign in again, here or in another tab.',
     }
-  if (response.status === 403 || response.status === 404) return { ok: false, kind: 'noAccess', what: noAccess(message) }
+  if (response.status === 403 || response.status === 404)
+    return { ok: false, kind: 'noAccess', what: noAccess(message) }
   if (response.status === 429 || response.status >= 500)
     return {
       ok: false,

@@ -6,6 +6,7 @@ import { useRouter } from 'next/navigation'
 import { useDeferredValue, useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { notify } from '@/components/ui/toast'
+import { useAction } from '@/components/ui/use-action'
 import { BookMenu } from './book-menu'
 import { BooksDialogs, type OpenDialog } from './books-dialogs'
 import { BooksTable } from './books-table'
@@ -13,7 +14,6 @@ import { BooksToolbar } from './books-toolbar'
 import { NoBooks } from './no-books'
 import { ProjectMenu } from './project-menu'
 import type { BookRow, BooksActions, ProjectRow } from './types'
-import { useAction } from '@/components/ui/use-action'
 
 export type BooksViewProps = {
   team: { slug: string; name: string; role: string }

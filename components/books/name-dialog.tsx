@@ -4,23 +4,24 @@ import { type FormEvent, useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { Dialog, DialogActions } from '@/components/ui/dialog'
 import { Field, Input } from '@/components/ui/field'
-import type { Result } from '@/lib/errors'
 import { useAction } from '@/components/ui/use-action'
+import type { Result } from '@/lib/errors'
 
-export type NameDialogProps = {
+export type NameDialogProps<T> = {
   title: string
   description?: string
   label: string
   /** What the box holds at first. */
   name: string
   verb: string
-  action: (name: string) => Promise<Result<unknown>>
-  onDone: (name: string, value: unknown) => void
+  action: (name: string) => Promise<Result<T>>
+  onDone: (name: string, value: T) => void
   onClose: () => void
 }
 
 /** Asks for one name: a new project, a new name, the name of a copy. Mount it to open it. */
-export function NameDialog({ title, description, label, name, verb, action, onDone, onClose }: NameDialogProps) {
+export function NameDialog<T>(props: NameDialogProps<T>) {
+  const { title, description, label, name, verb, action, onDone, onClose } = props
   const { run, isBusy, refusal } = useAction({ quiet: true })
   const [wrong, setWrong] = useState<string | undefined>()
 

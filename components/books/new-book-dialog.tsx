@@ -6,11 +6,11 @@ import { Dialog, DialogActions } from '@/components/ui/dialog'
 import { ErrorSummary, type FormProblem } from '@/components/ui/error-summary'
 import { Field, Input } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
+import { useAction } from '@/components/ui/use-action'
 import { type Basis, FlowUnitSelect } from './flow-unit-select'
 import { StartChoice } from './start-choice'
 import { starters } from './starters'
 import type { BooksActions, NewBook, ProjectRow, StarterId } from './types'
-import { useAction } from '@/components/ui/use-action'
 
 type NewBookDialogProps = {
   projects: readonly ProjectRow[]

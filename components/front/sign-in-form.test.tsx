@@ -3,12 +3,18 @@ import userEvent from '@testing-library/user-event'
 import { beforeEach, describe, expect, it, vi } from 'vitest'
 import { SignInForm } from './sign-in-form'
 
-const email = vi.hoisted(() => vi.fn())
-vi.mock('@/lib/auth/client', () => ({ authClient: { signIn: { email } } }))
+const { email, verifyTotp, verifyBackupCode } = vi.hoisted(() => ({
+  email: vi.fn(),
+  verifyTotp: vi.fn(),
+  verifyBackupCode: vi.fn(),
+}))
+vi.mock('@/lib/auth/client', () => ({
+  authClient: { signIn: { email }, twoFactor: { verifyTotp, verifyBackupCode } },
+}))
 
 const assign = vi.fn()
 beforeEach(() => {
-  email.mockReset()
+  for (const call of [email, verifyTotp, verifyBackupCode]) call.mockReset()
   assign.mockReset()
   vi.spyOn(window.location, 'assign').mockImplementation(assign)
 })
@@ -85,4 +91,50 @@ describe('SignInForm', () => {
     await user.click(screen.getByRole('button', { name: 'Show the password' }))
     expect(screen.getByLabelText('Password')).toHaveAttribute('type', 'text')
   })
+})
+
+describe('the second step', () => {
+  const toSecondStep = async () => {
+    email.mockResolvedValue({ data: { twoFactorRedirect: true, twoFactorMethods: ['totp'] }, error: null })
+    render(<SignInForm next="/fennholt/books/b1" demo={null} />)
+    const user = userEvent.setup()
+    await user.type(screen.getByLabelText('E-mail'), 'ada@fennholt.example')
+    await user.type(screen.getByLabelText('Password'), 'three plain words{Enter}')
+    await screen.findByLabelText('Code from your authenticator')
+    expect(assign).not.toHaveBeenCalled()
+    return user
+  }
+
+  it('takes a code, however it is spaced, and goes on', async () => {
+    verifyTotp.mockResolvedValue({ data: {}, error: null })
+    const user = await toSecondStep()
+    expect(screen.getByLabelText('Code from your authenticator')).toHaveFocus()
+    await user.keyboard('123 456{Enter}')
+    expect(verifyTotp).toHaveBeenCalledWith({ code: '123456' })
+    await waitFor(() => expect(assign).toHaveBeenCalledWith('/fennholt/books/b1'))
+  })
+
+  it('says a wrong code beside its field, and takes a backup code instead', async () => {
+    verifyTotp.mockResolvedValue({ data: null, error: { code: 'INVALID_CODE', status: 401 } })
+    verifyBackupCode.mockResolvedValue({ data: {}, error: null })
+    const user = await toSecondStep()
+    await user.keyboard('000000{Enter}')
+    const field = screen.getByLabelText('Code from your authenticator')
+    await waitFor(() => expect(field).toHaveAccessibleDescription(/This code is not right/))
+    await user.click(screen.getByRole('button', { name: 'Use a backup code' }))
+    await user.type(screen.getByLabelText('Backup code'), 'AbCdE-fGhIj{Enter}')
+    expect(verifyBackupCode).toHaveBeenCalledWith({ code: 'AbCdE-fGhIj' })
+    await waitFor(() => expect(assign).toHaveBeenCalledOnce())
+  })
+
+  it.each(['TOO_MANY_ATTEMPTS_REQUEST_NEW_CODE', 'INVALID_TWO_FACTOR_COOKIE'])(
+    'goes back to the password with the reason after %s',
+    async (code) => {
+      verifyTotp.mockResolvedValue({ data: null, error: { code, status: 400 } })
+      const user = await toSecondStep()
+      await user.keyboard('000000{Enter}')
+      expect(await screen.findByLabelText('Password')).toBeVisible()
+      expect(screen.getByRole('alert')).toHaveTextContent(/Begin again with your password/)
+    },
+  )
 })

@@ -1,5 +1,6 @@
 'use client'
 
+import Link from 'next/link'
 import { type FormEvent, useRef, useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { ErrorSummary, type FormProblem } from '@/components/ui/error-summary'
@@ -7,6 +8,7 @@ import { Field, Input } from '@/components/ui/field'
 import { authClient } from '@/lib/auth/client'
 import { DemoAccounts, type DemoAccountsProps } from './demo-accounts'
 import { PasswordInput } from './password-input'
+import { SecondStep } from './second-step'
 import { emailProblem, signFault } from './sign-words'
 
 type SignInFormProps = {
@@ -19,17 +21,21 @@ type SignInFormProps = {
 export function SignInForm({ next, demo }: SignInFormProps) {
   const [problems, setProblems] = useState<FormProblem[]>([])
   const [isBusy, setBusy] = useState(false)
+  const [step, setStep] = useState<'password' | 'code'>('password')
   const form = useRef<HTMLFormElement>(null)
+
+  // A whole page load: what a signed-out visitor was shown is not kept in the router's cache.
+  const leave = () => window.location.assign(next)
 
   const signIn = async (email: string, password: string) => {
     if (isBusy) return
     setBusy(true)
     setProblems([])
     try {
-      const { error } = await authClient.signIn.email({ email, password })
-      // A whole page load: what a signed-out visitor was shown is not kept in the router's cache.
-      if (!error) return window.location.assign(next)
-      setProblems([{ text: signFault(error) }])
+      const { data, error } = await authClient.signIn.email({ email, password })
+      if (!error && !asksForCode(data)) return leave()
+      if (error) setProblems([{ text: signFault(error) }])
+      else setStep('code')
     } catch {
       setProblems([{ text: signFault({}) }])
     }
@@ -60,6 +66,16 @@ export function SignInForm({ next, demo }: SignInFormProps) {
   }
 
   const wrong = (field: string) => problems.find((problem) => problem.field === field)?.text
+  if (step === 'code')
+    return (
+      <SecondStep
+        onDone={leave}
+        onRestart={(reason) => {
+          setProblems(reason === null ? [] : [{ text: reason }])
+          setStep('password')
+        }}
+      />
+    )
   return (
     <div className="grid gap-6">
       <form ref={form} onSubmit={submit} noValidate className="sheet grid gap-4 p-5 sm:p-6">
@@ -73,8 +89,16 @@ export function SignInForm({ next, demo }: SignInFormProps) {
         <Button type="submit" look="main" size="large" busy={isBusy}>
           {isBusy ? 'Signing in' : 'Sign in'}
         </Button>
+        <Link href="/reset" className="link justify-self-start">
+          The password is lost
+        </Link>
       </form>
       {demo ? <DemoAccounts {...demo} onPick={pick} /> : null}
     </div>
   )
+}
+
+/** The password was right, and the account asks for a second step. */
+function asksForCode(data: object | null): boolean {
+  return data !== null && 'twoFactorRedirect' in data && data.twoFactorRedirect === true
 }

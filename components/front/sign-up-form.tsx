@@ -7,10 +7,13 @@ import { Field, Input } from '@/components/ui/field'
 import { authClient } from '@/lib/auth/client'
 import { longestPassword, shortestPassword } from '@/lib/auth/password'
 import { nameProblem } from '@/lib/auth/person-name'
+import { LookInMail } from './look-in-mail'
 import { PasswordInput } from './password-input'
 import { emailProblem, newPasswordProblem, signFault } from './sign-words'
 
-export function SignUpForm({ next }: { next: string }) {
+/** Makes an account. The answer is the same for an address that has one: what it has, its mailbox alone is told. */
+export function SignUpForm() {
+  const [sentTo, setSentTo] = useState<string | null>(null)
   const [problems, setProblems] = useState<FormProblem[]>([])
   const [isBusy, setBusy] = useState(false)
 
@@ -33,14 +36,15 @@ export function SignUpForm({ next }: { next: string }) {
     setBusy(true)
     try {
       const { error } = await authClient.signUp.email({ name, email, password })
-      if (!error) return window.location.assign(next)
-      setProblems([{ text: signFault(error) }])
+      if (!error) setSentTo(email)
+      else setProblems([{ text: signFault(error) }])
     } catch {
       setProblems([{ text: signFault({}) }])
     }
     setBusy(false)
   }
 
+  if (sentTo !== null) return <LookInMail email={sentTo} onOther={() => setSentTo(null)} />
   const wrong = (field: string) => problems.find((problem) => problem.field === field)?.text
   return (
     <form onSubmit={submit} noValidate className="sheet grid gap-4 p-5 sm:p-6">

@@ -8,6 +8,8 @@ const push = vi.hoisted(() => vi.fn())
 vi.mock('@/lib/auth/client', () => ({ authClient: { signOut } }))
 vi.mock('next/navigation', () => ({ useRouter: () => ({ push }) }))
 
+const createTeam = vi.fn()
+const leaveTeam = vi.fn()
 const assign = vi.fn()
 beforeEach(() => {
   vi.clearAllMocks()
@@ -17,7 +19,14 @@ beforeEach(() => {
 const fennholt = { slug: 'fennholt', name: 'Fennholt' }
 async function open(teams = [fennholt]) {
   const person = { name: 'Ada Lovelace', email: 'ada@fennholt.example' }
-  render(<PersonMenu team={{ ...fennholt, role: 'checker' }} teams={teams} person={person} />)
+  render(
+    <PersonMenu
+      team={{ ...fennholt, role: 'checker' }}
+      teams={teams}
+      person={person}
+      actions={{ createTeam, leaveTeam }}
+    />,
+  )
   const user = userEvent.setup()
   await user.tab()
   expect(screen.getByRole('button', { name: 'Ada Lovelace, checker of Fennholt' })).toHaveFocus()
@@ -54,6 +63,31 @@ describe('PersonMenu', () => {
     await open()
     expect(screen.queryByRole('menuitemradio', { name: 'Fennholt' })).toBeNull()
     expect(screen.getByRole('menuitemradio', { name: 'Dark' })).toBeInTheDocument()
+  })
+})
+
+describe('teams from the menu', () => {
+  it('makes another one and goes there', async () => {
+    createTeam.mockResolvedValue({ ok: true, value: { slug: 'second-yard' } })
+    const user = await open()
+    await user.click(screen.getByRole('menuitem', { name: 'New team…' }))
+    await user.type(screen.getByLabelText('Name'), 'Second yard{Enter}')
+    expect(createTeam).toHaveBeenCalledWith({ name: 'Second yard' })
+    await waitFor(() => expect(assign).toHaveBeenCalledWith('/second-yard/books'))
+  })
+
+  it('asks before one leaves, and tells in the question why one cannot', async () => {
+    const message = 'A team needs an owner who can sign in to it. Make somebody else an owner first.'
+    leaveTeam.mockResolvedValueOnce({ ok: false, error: { code: 'conflict', message } })
+    const user = await open()
+    await user.click(screen.getByRole('menuitem', { name: 'Leave this team…' }))
+    expect(leaveTeam).not.toHaveBeenCalled()
+    await user.click(screen.getByRole('button', { name: 'Leave the team' }))
+    expect(await screen.findByText(message)).toBeVisible()
+    expect(assign).not.toHaveBeenCalled()
+    leaveTeam.mockResolvedValueOnce({ ok: true, value: undefined })
+    await user.click(screen.getByRole('button', { name: 'Leave the team' }))
+    await waitFor(() => expect(assign).toHaveBeenCalledWith('/home'))
   })
 })
 

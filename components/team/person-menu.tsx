@@ -1,17 +1,20 @@
 'use client'
 
-import { LogOut } from 'lucide-react'
+import { CircleUserRound, DoorOpen, LogOut, Plus } from 'lucide-react'
 import { useRouter } from 'next/navigation'
 import { useState } from 'react'
+import { LeaveDialog } from '@/components/members/member-dialogs'
 import { Menu, MenuChoice, MenuItem, MenuLabel, MenuRule } from '@/components/ui/menu'
 import { themeOptions, useThemeChoice } from '@/components/ui/theme'
 import { notifyProblem } from '@/components/ui/toast'
 import { authClient } from '@/lib/auth/client'
+import { NewTeamDialog, type TeamActions } from './new-team-dialog'
 
 export type PersonMenuProps = {
   team: { slug: string; name: string; role: string }
   teams: readonly { slug: string; name: string }[]
   person: { name: string; email: string }
+  actions: TeamActions
 }
 
 /** "Ada Lovelace" -> "AL". By grapheme, so that no letter is cut in half. */
@@ -22,11 +25,12 @@ export function initials(name: string): string {
   return first(words[0]) + (words.length > 1 ? first(words.at(-1)) : '')
 }
 
-/** Who is signed in, and as what; team, theme and signing out. */
-export function PersonMenu({ team, teams, person }: PersonMenuProps) {
+/** Who is signed in, and as what; account, teams, theme and signing out. */
+export function PersonMenu({ team, teams, person, actions }: PersonMenuProps) {
   const router = useRouter()
   const { choice, choose } = useThemeChoice()
   const [isLeaving, setLeaving] = useState(false)
+  const [open, setOpen] = useState<'newTeam' | 'leaveTeam' | null>(null)
 
   const signOut = async () => {
     setLeaving(true)
@@ -41,7 +45,7 @@ export function PersonMenu({ team, teams, person }: PersonMenuProps) {
     notifyProblem('You are still signed in: the server did not answer. Try again.')
   }
 
-  return (
+  const menu = (
     <Menu
       align="end"
       side="top"
@@ -78,6 +82,16 @@ export function PersonMenu({ team, teams, person }: PersonMenuProps) {
         </>
       ) : null}
       <MenuRule />
+      <MenuItem icon={<CircleUserRound />} onSelect={() => router.push('/account')}>
+        Your account
+      </MenuItem>
+      <MenuItem icon={<Plus />} onSelect={() => setOpen('newTeam')}>
+        New team…
+      </MenuItem>
+      <MenuItem icon={<DoorOpen />} onSelect={() => setOpen('leaveTeam')}>
+        Leave this team…
+      </MenuItem>
+      <MenuRule />
       <MenuLabel>Light or dark</MenuLabel>
       <MenuChoice stay label="Light or dark" value={choice ?? 'system'} onValueChange={choose} options={themeOptions} />
       <MenuRule />
@@ -85,5 +99,14 @@ export function PersonMenu({ team, teams, person }: PersonMenuProps) {
         Sign out
       </MenuItem>
     </Menu>
+  )
+  return (
+    <>
+      {menu}
+      {open === 'newTeam' ? <NewTeamDialog createTeam={actions.createTeam} onClose={() => setOpen(null)} /> : null}
+      {open === 'leaveTeam' ? (
+        <LeaveDialog teamName={team.name} leaveTeam={actions.leaveTeam} onClose={() => setOpen(null)} />
+      ) : null}
+    </>
   )
 }

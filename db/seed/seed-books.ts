@@ -4,6 +4,7 @@ import { book } from '@/db/schema/book'
 import { starters } from '@/lib/book/starters'
 import { createBook } from '@/lib/data/book/create-book'
 import { writeChanges } from '@/lib/data/book/write-changes'
+import { refreshSummary } from '@/lib/data/records/summary'
 import type { Result } from '@/lib/errors'
 import { type DemoProject, demoProjects, demoTeam } from './demo-team'
 import { idOf } from './seed-team'
@@ -22,7 +23,9 @@ export async function seedBooks(): Promise<void> {
     const inProject = and(eq(book.projectId, project.id), eq(book.createdBy, engineer.userId))
     const [there] = await db.select({ id: book.id, number: book.number }).from(book).where(inProject)
     if (there && there.number > 1) continue
-    await numberDocument(there?.id ?? (await makeBook(project, name)), project.documentNumber)
+    const id = there?.id ?? (await makeBook(project, name))
+    await numberDocument(id, project.documentNumber)
+    await refreshSummary(id)
   }
 }
 

@@ -50,17 +50,6 @@ export async function putOnClipboard(page: Page, text: string): Promise<void> {
   await page.evaluate((value) => navigator.clipboard.writeText(value), text)
 }
 
-/** A sign-up of a person nobody has been before. */
-export async function signUp(page: Page, name: string): Promise<void> {
-  const address = `${name.toLowerCase().replace(/\W+/g, '.')}.${Math.random().toString(36).slice(2)}@plant.example`
-  await page.goto('/sign-up')
-  await page.getByLabel('Your name').fill(name)
-  await page.getByLabel('Work e-mail').fill(address)
-  await page.getByLabel('Password', { exact: true }).fill('a long enough password')
-  await page.keyboard.press('Enter')
-  await page.waitForURL(/\/books$/)
-}
-
 /** A new blank book in the first project, opened. */
 export async function newBlankBook(page: Page, name: string): Promise<void> {
   await page

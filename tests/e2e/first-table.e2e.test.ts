@@ -1,6 +1,8 @@
 import { expect } from 'vitest'
-import { allKept, cell, newBlankBook, putOnClipboard, said, signUp } from './bench'
+import { allKept, cell, newBlankBook, putOnClipboard, said } from './bench'
 import { scenario } from './harness'
+import { linkMailedTo } from './mail'
+import { signUp } from './sign-up'
 
 scenario(
   'from sign-up to a first solved table by keyboard alone',
@@ -32,7 +34,21 @@ scenario(
     if (name !== 'name') await tabTo(/your name/i)
     await page.keyboard.type('Ada Fennholt')
     await tabTo(/work e-mail/i)
-    await page.keyboard.type(`ada.${Date.now()}@plant.example`)
+    const address = `ada.${Date.now()}@plant.example`
+    await page.keyboard.type(address)
+    await tabTo(/^\s*password/i)
+    await page.keyboard.type('a long enough password')
+    await press('Enter')
+    await page.getByRole('heading', { name: 'Now look in your mail' }).waitFor()
+    await page.goto(await linkMailedTo(page, address, /Confirm your e-mail address/, '/verify'))
+    await tabTo(/confirm this address/i)
+    await press('Enter')
+    await page.getByRole('heading', { name: 'Your address is confirmed' }).waitFor()
+    await tabTo(/sign in/i)
+    await press('Enter')
+    await page.waitForURL(/sign-in/)
+    await tabTo(/^\s*e-mail/i)
+    await page.keyboard.type(address)
     await tabTo(/^\s*password/i)
     await page.keyboard.type('a long enough password')
     await press('Enter')

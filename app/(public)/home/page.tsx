@@ -1,7 +1,8 @@
 import { headers } from 'next/headers'
 import { redirect } from 'next/navigation'
+import { createTeam } from '@/app/(team)/[team]/actions'
 import { FrontHeader } from '@/components/front/front-header'
-import { EmptyState } from '@/components/ui/empty-state'
+import { NoTeam } from '@/components/team/no-team'
 import { contextFrom } from '@/lib/auth/context'
 import { listMyTeams } from '@/lib/data/team/list-my-teams'
 
@@ -15,11 +16,7 @@ export default async function HomePage() {
     <>
       <FrontHeader isSignedIn={false} bare />
       <main id="main" className="mx-auto max-w-2xl pt-[10vh]">
-        <EmptyState level={1} title="You are in no team just now">
-          <p>
-            Your account is fine, but no team counts you as a member. Ask the owner of your team to let you in again.
-          </p>
-        </EmptyState>
+        <NoTeam createTeam={createTeam} />
       </main>
     </>
   )

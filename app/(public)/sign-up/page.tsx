@@ -27,7 +27,7 @@ export default async function SignUpPage({ searchParams }: PageProps<'/sign-up'>
         </>
       }
     >
-      <SignUpForm next={next ?? '/home'} />
+      <SignUpForm />
     </SignPage>
   )
 }

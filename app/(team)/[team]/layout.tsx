@@ -1,5 +1,6 @@
 import { TeamFrame } from '@/components/team/team-frame'
 import { listMyTeams } from '@/lib/data/team/list-my-teams'
+import { createTeam, leaveTeam } from './actions'
 import { readTeam, requestContext } from './open-team'
 
 export default async function TeamLayout({ children, params }: LayoutProps<'/[team]'>) {
@@ -13,6 +14,7 @@ export default async function TeamLayout({ children, params }: LayoutProps<'/[te
       team={{ slug, name, role }}
       teams={teams.ok ? teams.value.map((mine) => ({ slug: mine.slug, name: mine.name })) : []}
       person={{ name: user.name, email: user.email }}
+      actions={{ createTeam, leaveTeam: leaveTeam.bind(null, slug) }}
     >
       {children}
     </TeamFrame>

@@ -9,9 +9,8 @@ import * as restore from '@/lib/data/book/restore-book'
 import * as makeProject from '@/lib/data/project/create-project'
 import * as nameProject from '@/lib/data/project/rename-project'
 
-const shownAt = { path: '/[team]/books', kind: 'page' } as const
-
 /** The small forms of the list of books. */
+const shownAt = { path: '/[team]/books', kind: 'page' } as const
 
 export async function createBook(team: string, input: NewBook) {
   return perform((ctx) => create.createBook(ctx, { team, ...input }), shownAt)
