@@ -7,9 +7,11 @@ import { buildModel, ColumnKind, type Model } from './model'
 import type { Problem } from './problem'
 import { fixedRuleValue, ruleInUse } from './rows/assemble'
 import type { Solution } from './solution'
+import { findAmplified } from './states/amplification'
 import { emptyCells, fillCells } from './states/fill-cells'
 import { freeScaleBlocks } from './states/free-scale'
 import { fixedValue } from './states/knowledge'
+import { takenByPending } from './states/open-freedom'
 import { pendingDiagnostics, zeroInletDiagnostics } from './states/rule-diagnostics'
 import { countCells, extentResults, freedomWithin } from './states/summary'
 
@@ -18,10 +20,10 @@ import { countCells, extentResults, freedomWithin } from './states/summary'
  * the status `gaveUp` with a diagnostic that says so. Array sizes are those of `Solution`.
  */
 export function solve(problem: Problem): Solution {
-  const model = buildModel(problem)
-  if (!model)
-    return gaveUp(problem, `The flow unit ${problem.flowUnit} does not fit a book on a ${problem.basis} basis.`)
   try {
+    const model = buildModel(problem)
+    if (!model)
+      return gaveUp(problem, `The flow unit ${problem.flowUnit} does not fit a book on a ${problem.basis} basis.`)
     return solveModel(model)
   } catch (error) {
     const reason = error instanceof Error ? error.message : String(error)
@@ -37,6 +39,7 @@ function solveModel(model: Model): Solution {
   const { assembly, resolved, atOdds } = settled
   const { knowledge } = resolved
   const cells = fillCells(model, knowledge, assembly.givens, atOdds)
+  const amplification = findAmplified(model, settled, cells)
   const counts = countCells(model, cells)
   const known = (column: number): number | undefined => fixedValue(knowledge, columnForm(column))
   const parameterFreedom = freedomWithin(model, knowledge.elimination.rows, [ColumnKind.parameter])
@@ -46,14 +49,15 @@ function solveModel(model: Model): Solution {
     status: settled.sets.length > 0 ? 'atOdds' : counts.unknown > 0 ? 'open' : 'solved',
     summary: {
       ...counts,
-      degreesOfFreedom: knowledge.elimination.free.length - parameterFreedom,
+      degreesOfFreedom:
+        knowledge.elimination.free.length - parameterFreedom - takenByPending(model, knowledge, resolved.left),
       extentFreedom,
       freeScale: freeScaleBlocks(model, assembly, (s) => known(model.totalColumn[s] as number) === 0),
     },
     nStreams: model.nStreams,
     nComponents: model.nComponents,
     ...cells,
-    amplification: [],
+    amplification,
     blockedBy: blockedCells(model, settled, cells),
     extents: extentResults(model, givenExtents(model), known),
     conflicts: describeConflicts(model, settled),

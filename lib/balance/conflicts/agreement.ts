@@ -1,4 +1,4 @@
-import type { Member } from '../rows/assemble'
+import type { Member } from '../rows/members'
 import type { Circuit } from './circuit'
 
 /** How far values must move for all circuits to close, in half-widths, and a compromise that closes them. */

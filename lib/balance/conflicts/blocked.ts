@@ -1,5 +1,6 @@
 import type { Model } from '../model'
-import { assemble, type Member } from '../rows/assemble'
+import { assemble } from '../rows/assemble'
+import type { Member } from '../rows/members'
 import { CellState, type Solution } from '../solution'
 import { forEachCell } from '../states/cells'
 import type { CellArrays } from '../states/fill-cells'

@@ -1,4 +1,4 @@
-import type { Member } from '../rows/assemble'
+import type { Member } from '../rows/members'
 import { type Circuit, combineCircuits } from './circuit'
 
 /** At most this many sets are listed. */

@@ -1,10 +1,12 @@
 import type { LinearForm } from '../measure/measure'
 import type { Model } from '../model'
-import { type Assembly, type Member, memberOfRule } from '../rows/assemble'
+import type { Assembly } from '../rows/assemble'
+import { type Member, memberOfRule } from '../rows/members'
 import type { Elimination } from '../sparse/elimination'
-import { solveTransposed } from '../sparse/solve'
+import type { Vector } from '../sparse/solve'
+import { solveTransposed } from '../sparse/transposed'
 import { evaluate } from '../states/knowledge'
-import type { Resolved } from '../states/resolve'
+import type { Resolved } from '../states/resolved'
 
 /**
  * A combination of rows in which every unknown cancels. With the typed values put in, what is left is `gap`: 0 where the
@@ -25,6 +27,9 @@ export type Circuit = {
 /** A row that weighs less than this part of the heaviest one takes part by rounding only. */
 const NOISE = 1e-12
 
+/** A member whose weights cancel to this part of themselves takes no part. */
+const CANCELS = 1e-9
+
 /** Rounding of a sum beside its terms, with room for long chains. */
 const ROUNDING = 1e-13
 
@@ -34,7 +39,12 @@ export class Tracer {
     private readonly model: Model,
     private readonly assembly: Assembly,
     private readonly resolved: Resolved,
+    /** Where rows are weighed against each other: the generic solution, unless flows there are 0. */
+    private readonly point: Vector = resolved.knowledge.generic,
   ) {}
+
+  /** Sum of the sizes of what is added up to each member's weight, to tell what cancels. */
+  private parts = new Map<Member, number>()
 
   /** The circuit of a dependent row (by its number among the compiled rows) with the pivot rows. */
   ofDependent(row: number): Circuit {
@@ -59,21 +69,32 @@ export class Tracer {
 
   private collect(e: Elimination, y: Float64Array, sign: number): Circuit {
     const circuit: Circuit = { gap: 0, terms: 0, weight: new Map(), reach: new Map(), structure: new Set() }
+    const parts = this.parts
+    this.parts = new Map()
     const sizes = y.map((factor, i) => (factor === 0 ? 0 : Math.abs(factor) * this.sizeOf(e, i)))
     const largest = sizes.reduce((most, size) => Math.max(most, size), 0)
     for (let i = 0; i < y.length; i++)
       if ((sizes[i] as number) > NOISE * largest)
         this.addRow(circuit, e.rows.stored[i] as number, sign * (y[i] as number))
     circuit.terms = sizes.reduce((sum, size) => sum + size, 0)
+    for (const [member, weight] of circuit.weight)
+      if (Math.abs(weight) <= CANCELS * (this.parts.get(member) as number)) {
+        circuit.weight.delete(member)
+        circuit.reach.delete(member)
+      }
+    this.parts = parts
     return settleGap(circuit)
   }
 
   /** Largest term of a row at the generic solution, so that rows are compared by what they weigh there. */
   private sizeOf(e: Elimination, row: number): number {
-    const { generic } = this.resolved.knowledge
+    const generic = this.point
     let most = Number.MIN_VALUE
     for (let k = e.rows.start[row] as number; k < (e.rows.start[row + 1] as number); k++)
-      most = Math.max(most, Math.abs((e.rows.value[k] as number) * (generic[e.rows.column[k] as number] as number)))
+      most = Math.max(
+        most,
+        Math.abs((e.rows.value[k] as number) * (generic.value[e.rows.column[k] as number] as number)),
+      )
     return most
   }
 
@@ -88,28 +109,39 @@ export class Tracer {
     if (source?.type !== 'given' && source?.type !== 'rule') return
     const member = source.type === 'given' ? source.index : memberOfRule(this.model, source.index)
     const typed = rows.typed[row]
-    const { generic } = this.resolved.knowledge
+    const generic = this.point
     const below = typed?.measure.denominator
     const scale = typed ? (below ? evaluate(below, generic).value : 1) : 0
     add(circuit.weight, member, factor * scale)
+    add(this.parts, member, Math.abs(factor * scale))
     add(circuit.reach, member, factor * scale * (typed?.halfWidth ?? 0))
+  }
+
+  private sizeAt(row: number, { value }: Vector): number {
+    const { rows } = this.assembly
+    let size = 0
+    for (let k = rows.start[row] as number; k < (rows.start[row + 1] as number); k++)
+      size += Math.abs((rows.value[k] as number) * (value[rows.column[k] as number] as number))
+    return size
   }
 
   /** A row that was turned linear rests on values known before; their members take part in proportion. */
   private addRests(circuit: Circuit, row: number, factor: number, forms: readonly LinearForm[]): void {
-    const { rows } = this.assembly
-    const { generic } = this.resolved.knowledge
+    const generic = this.point
     const round = [...this.resolved.rounds].reverse().find(({ firstRow }) => firstRow <= row)
     if (!round) return
-    let size = 0
-    for (let k = rows.start[row] as number; k < (rows.start[row + 1] as number); k++)
-      size += Math.abs((rows.value[k] as number) * (generic[rows.column[k] as number] as number))
+    // Where the flows of the row are 0 now, they are weighed as they stood when the row was added.
+    const point = this.sizeAt(row, generic) > 0 ? generic : round.knowledge.generic
+    const size = this.sizeAt(row, point)
     for (const form of forms) {
       const rest = this.ofForm(round.knowledge.elimination, form)
       if (!rest) continue
-      const { terms } = evaluate(form, round.knowledge.generic)
+      const terms = evaluate(form, point).terms
       const share = terms > 0 ? (factor * size) / terms : 0
-      for (const [member, weight] of rest.weight) add(circuit.weight, member, share * weight)
+      for (const [member, weight] of rest.weight) {
+        add(circuit.weight, member, share * weight)
+        add(this.parts, member, Math.abs(share * weight))
+      }
       for (const [member, reach] of rest.reach) add(circuit.reach, member, share * reach)
       for (const source of rest.structure) circuit.structure.add(source)
     }
@@ -141,7 +173,7 @@ export function combineCircuits(a: number, left: Circuit, b: number, right: Circ
   }
   for (const member of [...weight.keys()]) {
     const terms = Math.abs(a * (left.weight.get(member) ?? 0)) + Math.abs(b * (right.weight.get(member) ?? 0))
-    if (Math.abs(weight.get(member) as number) > 1e-9 * terms) continue
+    if (Math.abs(weight.get(member) as number) > CANCELS * terms) continue
     weight.delete(member)
     reach.delete(member)
   }

@@ -1,13 +1,16 @@
 import type { Model } from '../model'
-import { type Assembly, type AssemblyOptions, assemble, type Member, memberOfRule } from '../rows/assemble'
+import { type Assembly, assemble } from '../rows/assemble'
 import type { FractionClash } from '../rows/givens'
+import { type AssemblyOptions, type Member, memberOfRule } from '../rows/members'
 import { openRows } from '../states/open-rows'
-import { type Resolved, resolve } from '../states/resolve'
+import { resolve } from '../states/resolve'
+import type { Resolved } from '../states/resolved'
 import { agree } from './agreement'
-import { type Circuit, Tracer, tension } from './circuit'
-import { membersAtOdds, membersOf, minimalSets, reduceCircuits } from './circuit-space'
+import { type Circuit, tension } from './circuit'
+import { membersAtOdds, membersOf, minimalSets } from './circuit-space'
 import { findForcedZero } from './forced-zero'
-import { dependentRowsNear } from './near-rows'
+import { shrinkSets } from './shrink'
+import { traceCircuits } from './trace-circuits'
 
 /** A minimal set of givens and rules that cannot all hold, before it is worded. */
 export type ConflictSet = { code: 'fractionSum' | 'balance' | 'forcedZero'; circuit: Circuit; stream?: number }
@@ -26,8 +29,6 @@ export type Settled = {
 /** Above 1 by less than this, half-widths still just reach. */
 const JUST = 1e-6
 const MOST_PASSES = 24
-/** Above this many row entries times dependent rows only the rows that do not hold are traced. */
-const MOST_TRACING = 4e8
 
 /**
  * Solves a model, finds what cannot hold together, and solves again without it. Values that differ by no more than their
@@ -49,6 +50,17 @@ export function settle(model: Model): Settled {
     const resolved = resolve(model, assembly)
     const done = { assembly, resolved, sets, truncated, atOdds, adjusted }
     if (pass >= MOST_PASSES) return done
+    // Ratios that contradict each other come first: flows of 0 would only hide them behind the flows that are typed.
+    const zero = findForcedZero(model, assembly, resolved, options)
+    if (zero) {
+      sets.push({
+        code: 'forcedZero',
+        circuit: zero.circuit,
+        ...(zero.stream !== undefined && { stream: zero.stream }),
+      })
+      for (const member of zero.circuit.weight.keys()) atOdds.add(member)
+      continue
+    }
     const open = openRows(resolved.knowledge)
     if (open.length > 0) {
       const circuits = traceCircuits(model, assembly, resolved, open)
@@ -62,42 +74,15 @@ export function settle(model: Model): Settled {
         }
         const found = conflictsOf(group)
         truncated ||= found.truncated
-        for (const circuit of found.sets) sets.push({ code: 'balance', circuit })
-        for (const member of found.atOdds) atOdds.add(member)
+        const all = new Set([...atOdds, ...found.atOdds])
+        const shrunk = shrinkSets(model, found.sets, { leaveOut: all, adjusted })
+        for (const circuit of shrunk.sets) sets.push({ code: 'balance', circuit })
+        for (const member of found.atOdds) if (truncated || !shrunk.dropped.has(member)) atOdds.add(member)
         changed = true
       }
       if (changed) continue
     }
-    const zero = findForcedZero(model, assembly, resolved, options)
-    if (!zero) return done
-    sets.push({ code: 'forcedZero', circuit: zero.circuit, ...(zero.stream !== undefined && { stream: zero.stream }) })
-    for (const member of zero.circuit.weight.keys()) atOdds.add(member)
-  }
-}
-
-/** All reduced circuits near the rows that do not hold, scaled so that the half-widths together reach 1. */
-function traceCircuits(model: Model, assembly: Assembly, resolved: Resolved, open: number[]): Circuit[] {
-  const tracer = new Tracer(model, assembly, resolved)
-  const near = dependentRowsNear(resolved, open)
-  const affordable = near.length * resolved.knowledge.elimination.rows.column.length <= MOST_TRACING
-  const circuits = (affordable ? near : open)
-    .map((row) => tracer.ofDependent(row))
-    .filter(({ weight }) => weight.size > 0)
-  return reduceCircuits(circuits).map(normalise)
-}
-
-function normalise(circuit: Circuit): Circuit {
-  let sum = 0
-  for (const reach of circuit.reach.values()) sum += Math.abs(reach)
-  if (sum === 0) return circuit
-  const scaled = (map: Map<Member, number>): Map<Member, number> =>
-    new Map([...map].map(([member, value]) => [member, value / sum]))
-  return {
-    gap: circuit.gap / sum,
-    terms: circuit.terms / sum,
-    weight: scaled(circuit.weight),
-    reach: scaled(circuit.reach),
-    structure: circuit.structure,
+    return done
   }
 }
 

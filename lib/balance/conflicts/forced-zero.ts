@@ -1,12 +1,14 @@
 import type { LinearForm } from '../measure/measure'
 import { ColumnKind, type Model } from '../model'
 import { seededRandom } from '../random'
-import { type Assembly, type AssemblyOptions, assemble } from '../rows/assemble'
+import { type Assembly, assemble } from '../rows/assemble'
+import type { AssemblyOptions } from '../rows/members'
 import type { Typed } from '../rows/row-store'
 import { compileRows } from '../sparse/compiled-rows'
 import { eliminate } from '../sparse/elimination'
 import { fixedValue, gatherKnowledge } from '../states/knowledge'
-import { type Resolved, resolve } from '../states/resolve'
+import { resolve } from '../states/resolve'
+import type { Resolved } from '../states/resolved'
 import { type Circuit, Tracer } from './circuit'
 
 /** Members that together leave only a flow of 0 where a fraction or ratio of that flow is typed. */
@@ -51,7 +53,8 @@ export function findForcedZero(
     if (fixedValue(gather(model, assembly, sharp), form) === 0) continue
     if (fixedValue(always, form) !== 0) continue
     const e = eliminate(compileRows(rows, model.nColumns, homogeneous), assembly.nonNegative)
-    const circuit = new Tracer(model, assembly, resolved).ofForm(e, form)
+    const ones = new Float64Array(model.nColumns).fill(1)
+    const circuit = new Tracer(model, assembly, resolved, { value: ones, size: ones }).ofForm(e, form)
     if (!circuit || circuit.weight.size === 0) continue
     return { circuit, stream: streamOf(model, form) }
   }

@@ -1,4 +1,4 @@
-import type { Resolved } from '../states/resolve'
+import type { Resolved } from '../states/resolved'
 
 /** Dependent rows that are joined to one of `seeds` through rows and columns. */
 export function dependentRowsNear({ knowledge }: Resolved, seeds: readonly number[]): number[] {

@@ -17,23 +17,31 @@ const CANCELS = 1e-15
 
 /** a x left + b x right, entries that cancel dropped. */
 export function combine(a: number, left: LinearForm, b: number, right: LinearForm): LinearForm {
-  const sum = new Map<number, number>()
-  left.columns.forEach((column, k) => {
-    sum.set(column, a * (left.coefficients[k] as number))
-  })
-  right.columns.forEach((column, k) => {
-    const before = sum.get(column) ?? 0
+  const columns = left.columns.slice()
+  const coefficients = left.coefficients.map((coefficient) => a * coefficient)
+  // Most forms are short, where a plain search beats a map.
+  const places = columns.length > 24 ? new Map(columns.map((column, k) => [column, k])) : undefined
+  for (let k = 0; k < right.columns.length; k++) {
+    const column = right.columns[k] as number
     const term = b * (right.coefficients[k] as number)
-    const after = before + term
-    sum.set(column, Math.abs(after) <= CANCELS * (Math.abs(before) + Math.abs(term)) ? 0 : after)
-  })
-  const columns: number[] = []
-  const coefficients: number[] = []
-  for (const [column, coefficient] of sum)
-    if (coefficient !== 0) {
+    const place = places ? (places.get(column) ?? -1) : columns.indexOf(column)
+    if (place < 0) {
       columns.push(column)
-      coefficients.push(coefficient)
+      coefficients.push(term)
+      continue
     }
+    const before = coefficients[place] as number
+    const after = before + term
+    coefficients[place] = Math.abs(after) <= CANCELS * (Math.abs(before) + Math.abs(term)) ? 0 : after
+  }
+  let kept = 0
+  for (let k = 0; k < columns.length; k++) {
+    if (coefficients[k] === 0) continue
+    columns[kept] = columns[k] as number
+    coefficients[kept++] = coefficients[k] as number
+  }
+  columns.length = kept
+  coefficients.length = kept
   return { columns, coefficients, constant: a * left.constant + b * right.constant }
 }
 

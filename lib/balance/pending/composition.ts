@@ -1,8 +1,10 @@
-import { combine, constantForm, type LinearForm, part, total } from '../measure/measure'
+import { combine, constantForm, type LinearForm } from '../measure/measure'
 import type { Model } from '../model'
-import { MOVES } from '../sparse/solve'
-import { addProbe, evaluate, fixedValue, type Knowledge, knownMeasure } from '../states/knowledge'
-import type { TurnedRow } from './pending'
+import { MOVES, type Vector } from '../sparse/solve'
+import { evaluate, fixedValue, type Knowledge, knownMeasure, moved } from '../states/knowledge'
+import { poolPart, poolTotal } from './pool'
+import { type Echelon, insert, relationsOf } from './relations'
+import type { TurnedRow } from './turned-row'
 
 /** Streams of one composition: the outlets of a splitter, or what a rule names. */
 export type Composition = {
@@ -11,10 +13,9 @@ export type Composition = {
   components: number[]
   /** Sets of streams whose sum has the same composition. */
   pools: number[][]
+  /** Streams that together make up all of `streams`; one of the pools where there are some. */
+  mixed: number[]
 }
-
-/** A flow of a pool that cancels to less than this part of its terms is too blurred to draw relations from. */
-const BLURRED = 1e-5
 
 /** Above this many streams only single ones and all together are looked at as pools. */
 const SUBSETS_UP_TO = 4
@@ -31,13 +32,8 @@ export function compositionOf(model: Model, streams: number[], mixed: number[] =
     }
   } else pools.push([...streams])
   if (mixed.length > 0) pools.push(mixed)
-  return { streams, components, pools }
+  return { streams, components, pools, mixed }
 }
-
-const poolPart = (model: Model, pool: number[], component: number): LinearForm =>
-  pool.reduce((form, s) => combine(1, form, 1, part(model, s, component)), constantForm(0))
-const poolTotal = (model: Model, pool: number[]): LinearForm =>
-  pool.reduce((form, s) => combine(1, form, 1, total(model, s)), constantForm(0))
 
 /**
  * Rows that follow for streams of one composition from what is known: a linear relation between the components of one
@@ -50,8 +46,14 @@ export function turnComposition(
   composition: Composition,
 ): { rows: TurnedRow[]; settled: boolean } {
   if (isMet(model, knowledge, composition)) return { rows: [], settled: true }
+  const rows = [...relationRows(model, knowledge, composition), ...ratioRows(model, knowledge, composition)]
+  return { rows: rows.filter(({ form }) => moves(knowledge, form)), settled: false }
+}
+
+/** Relations between components that hold in a pool, for every other stream; none that follows from those before it. */
+function relationRows(model: Model, knowledge: Knowledge, { streams, components, pools }: Composition): TurnedRow[] {
   const rows: TurnedRow[] = []
-  const { streams, components, pools } = composition
+  const had = new Map(streams.map((s): [number, Echelon] => [s, []]))
   for (const pool of pools)
     for (const relation of relationsOf(model, knowledge, pool, components)) {
       const over = (its: number[]): LinearForm =>
@@ -60,23 +62,35 @@ export function turnComposition(
             factor === 0 ? form : combine(1, form, factor, poolPart(model, its, components[k] as number)),
           constantForm(0),
         )
-      const restsOn = [over(pool)]
-      for (const s of streams) if (!(pool.length === 1 && pool[0] === s)) rows.push({ form: over([s]), restsOn })
+      for (const s of streams) {
+        if (pool.length === 1 && pool[0] === s) continue
+        if (insert(had.get(s) as Echelon, relation)) rows.push({ form: over([s]), restsOn: [over(pool)] })
+      }
     }
+  return rows
+}
+
+/** The same ratio of two pools for every component, where one is known; no two ways to the same ratio. */
+function ratioRows(model: Model, knowledge: Knowledge, { components, pools, mixed }: Composition): TurnedRow[] {
+  const rows: TurnedRow[] = []
   // A component that is 0 in one of the streams is 0 in all: how its flows compare says nothing of the totals.
   const telling = components.filter((c) => pools.every((pool) => fixedValue(knowledge, poolPart(model, pool, c)) !== 0))
+  const group = new Map(pools.map((pool, k) => [pool, k]))
   for (const [a, b] of pairs(pools)) {
-    const ratio = ratioOf(model, knowledge, a, b, telling)
+    if (group.get(a) === group.get(b)) continue
+    const ratio = ratioOf(model, knowledge, a, b, telling, mixed)
     if (!ratio) continue
+    const [from, to] = [group.get(a), group.get(b) as number]
+    for (const [pool, its] of group) if (its === from) group.set(pool, to)
     for (const c of components)
       rows.push({ form: combine(1, poolPart(model, a, c), -ratio.value, poolPart(model, b, c)), restsOn: [ratio.form] })
   }
-  return { rows: rows.filter(({ form }) => moves(knowledge, form)), settled: false }
+  return rows
 }
 
 /** True where the form is not already 0 in every solution. */
 function moves(knowledge: Knowledge, form: LinearForm): boolean {
-  const isNothing = (x: Float64Array, direction: boolean): boolean => {
+  const isNothing = (x: Vector, direction: boolean): boolean => {
     const { value, terms } = evaluate(form, x, direction)
     return Math.abs(value) <= MOVES * terms
   }
@@ -88,10 +102,9 @@ function isMet(model: Model, knowledge: Knowledge, { streams, components }: Comp
   const { generic, probes } = knowledge
   const points = [generic]
   const [, second, third] = probes
-  if (second) points.push(generic.map((value, j) => value + (second[j] as number)))
-  if (second && third)
-    points.push(generic.map((value, j) => value - 0.7 * (second[j] as number) + 1.3 * (third[j] as number)))
-  return points.every((x) => {
+  if (second) points.push(moved(generic, 1, second))
+  if (second && third) points.push(moved(moved(generic, -0.7, second), 1.3, third))
+  return points.every(({ value: x }) => {
     const flows = streams.map((s) =>
       components.map((c) => x[model.flowColumn[s * model.nComponents + c] as number] as number),
     )
@@ -118,8 +131,8 @@ function pairs(pools: number[][]): [number[], number[]][] {
 }
 
 /** Flows are not negative and a part is not more than the whole; a ratio that breaks this is one of flows that are 0. */
-function isPossible(ratio: number, a: number[], b: number[]): boolean {
-  const within = (left: number[], right: number[]): boolean => left.every((s) => right.includes(s))
+function isPossible(ratio: number, a: number[], b: number[], mixed: number[]): boolean {
+  const within = (left: number[], right: number[]): boolean => right === mixed || left.every((s) => right.includes(s))
   return ratio >= 0 && (ratio <= 1 || !within(a, b)) && (ratio >= 1 || !within(b, a))
 }
 
@@ -130,6 +143,7 @@ function ratioOf(
   a: number[],
   b: number[],
   telling: number[],
+  mixed: number[],
 ): { value: number; form: LinearForm } | undefined {
   const forms: [LinearForm, LinearForm][] = [
     [poolTotal(model, a), poolTotal(model, b)],
@@ -137,72 +151,8 @@ function ratioOf(
   ]
   for (const [numerator, denominator] of forms) {
     const value = knownMeasure(knowledge, { numerator, denominator })
-    if (value !== undefined && isPossible(value, a, b))
+    if (value !== undefined && isPossible(value, a, b, mixed))
       return { value, form: combine(1, numerator, -value, denominator) }
   }
   return undefined
-}
-
-/**
- * A basis of the linear relations between a pool's component flows that hold in every solution: the annihilator of
- * samples, by elimination with complete pivoting. Samples are added until one more brings nothing new.
- */
-function relationsOf(model: Model, knowledge: Knowledge, pool: number[], components: number[]): number[][] {
-  const forms = components.map((c) => poolPart(model, pool, c))
-  const sample = (x: Float64Array, direction: boolean): number[] =>
-    forms.map((form) => {
-      const { value, terms } = evaluate(form, x, direction)
-      if (Math.abs(value) <= MOVES * terms) return 0
-      if (Math.abs(value) < BLURRED * terms) blurred = true
-      return value
-    })
-  let blurred = false
-  const basis: { pivot: number; row: number[] }[] = []
-  insert(basis, sample(knowledge.particular, false))
-  // The directions come after the one solution: the first that brings nothing new ends it.
-  for (let q = 0; knowledge.probes.length > 0 && basis.length < components.length; q++) {
-    const before = basis.length
-    insert(basis, sample(knowledge.probes[q] ?? addProbe(knowledge), true))
-    if (basis.length === before) break
-  }
-  if (blurred || basis.length === 0 || basis.length === components.length) return []
-  const pivots = new Set(basis.map(({ pivot }) => pivot))
-  const relations: number[][] = []
-  components.forEach((_, k) => {
-    if (pivots.has(k)) return
-    const relation = components.map(() => 0)
-    relation[k] = 1
-    for (const { pivot, row } of basis) relation[pivot] = -(row[k] as number)
-    relations.push(relation)
-  })
-  return relations
-}
-
-/** Takes one sample into a reduced row-echelon basis, where it is not nothing beside its terms. */
-function insert(basis: { pivot: number; row: number[] }[], sample: number[]): void {
-  const row = [...sample]
-  const terms = row.map(Math.abs)
-  for (const { pivot, row: other } of basis) {
-    const factor = row[pivot] as number
-    other.forEach((value, k) => {
-      row[k]! -= factor * value
-      terms[k]! += Math.abs(factor * value)
-    })
-  }
-  let pivot = -1
-  row.forEach((value, k) => {
-    if (Math.abs(value) <= 10 * MOVES * (terms[k] as number)) row[k] = 0
-    else if (pivot < 0 || Math.abs(value) > Math.abs(row[pivot] as number)) pivot = k
-  })
-  if (pivot < 0) return
-  const head = row[pivot] as number
-  const reduced = row.map((value) => value / head)
-  for (const entry of basis) {
-    const factor = entry.row[pivot] as number
-    entry.row = entry.row.map((value, k) => {
-      const off = factor * (reduced[k] as number)
-      return Math.abs(value - off) <= MOVES * (Math.abs(value) + Math.abs(off)) ? 0 : value - off
-    })
-  }
-  basis.push({ pivot, row: reduced })
 }

@@ -4,9 +4,7 @@ import { columnForm, combine, constantForm, type LinearForm, type Measure } from
 import type { Model } from '../model'
 import { fixedValue, type Knowledge, knownMeasure } from '../states/knowledge'
 import type { Composition } from './composition'
-
-/** A linear row that a rule has turned into, and the forms whose known values it rests on. */
-export type TurnedRow = { form: LinearForm; restsOn: LinearForm[] }
+import type { TurnedRow } from './turned-row'
 
 /** What cannot be written as linear rows until more is known. */
 export type Pending =

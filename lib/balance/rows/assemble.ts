@@ -8,6 +8,7 @@ import type { Rule, Value } from '../problem'
 import { pushBalances } from './balances'
 import { pushDefinitions } from './definitions'
 import { type FractionClash, type GivenInUse, givensInUse, pushGivens } from './givens'
+import { type AssemblyOptions, memberOfRule } from './members'
 import { RowStore } from './row-store'
 import { measuresOfRule } from './rules'
 
@@ -28,21 +29,6 @@ export const ruleInUse = (rule: Rule): boolean => (rule.use ?? 'given') === 'giv
 export function fixedRuleValue(model: Model, value: Value): number | undefined {
   if (typeof value === 'number') return value
   return model.problem.parameters?.[model.parameterIndex.get(value.parameter) as number]?.value
-}
-
-/** A given by its index, a rule by the number of givens plus its index: what can be at odds. */
-export type Member = number
-export const memberOfRule = (model: Model, index: number): Member => (model.problem.givens?.length ?? 0) + index
-
-/** Changes to the rows for asking what follows without some, or with other values. */
-export type AssemblyOptions = {
-  leaveOut?: ReadonlySet<Member>
-  /** Values in place of those typed: what rounding settles on. */
-  adjusted?: ReadonlyMap<Member, number>
-  /** Fractions that do not add up are scaled, so that what hangs on them can still be seen. */
-  scaleFractions?: boolean
-  /** Changes every value but 0 and 1 a little, to tell what holds by chance of the numbers from what always holds. */
-  perturb?: (value: number) => number
 }
 
 /** Builds every row of a checked problem. Cost is proportional to the entries. */

@@ -2,7 +2,7 @@ import { columnForm, type LinearForm, measureOf } from '../measure/measure'
 import { isFraction, typedValue } from '../measure/typed-value'
 import { type Model, otherPerOwn } from '../model'
 import type { Given } from '../problem'
-import type { AssemblyOptions } from './assemble'
+import type { AssemblyOptions } from './members'
 import type { RowStore } from './row-store'
 
 /** A given as the rows take it: `value` may differ from what was typed where fractions were scaled or agree by rounding. */

@@ -65,7 +65,10 @@ function presentAt(model: Model, streams: number[]): number[] {
 
 /** Flow of a component into a unit, all inlets. */
 function fed(model: Model, unit: UnitModel, component: number): LinearForm {
-  return unit.inlets.reduce((form, s) => combine(1, form, 1, part(model, s, component)), constantForm(0))
+  const columns = unit.inlets
+    .map((s) => model.flowColumn[s * model.nComponents + component] as number)
+    .filter((column) => column >= 0)
+  return { columns, coefficients: columns.map(() => 1), constant: 0 }
 }
 
 const molesPerOwn = (model: Model, component: number): number =>

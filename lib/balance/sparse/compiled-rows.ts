@@ -13,6 +13,8 @@ export type CompiledRows = {
   rhs: Float64Array
   /** Relative half-width of what the row holds; only orders the elimination. */
   relativeError: Float64Array
+  /** 1 where the row is a sum of flows, so that a sum of 0 fixes each; not where it is a ratio. */
+  isSum: Uint8Array
   columnStart: Int32Array
   rowOfEntry: Int32Array
   placeOfEntry: Int32Array
@@ -37,6 +39,7 @@ export function compileRows(store: RowStore, nColumns: number, use?: Uint8Array)
   const value = new Float64Array(entries)
   const rhs = new Float64Array(nRows)
   const relativeError = new Float64Array(nRows)
+  const isSum = new Uint8Array(nRows)
   const columnStart = new Int32Array(nColumns + 1)
   let next = 0
   for (let i = 0; i < nRows; i++) {
@@ -50,6 +53,9 @@ export function compileRows(store: RowStore, nColumns: number, use?: Uint8Array)
     start[i + 1] = next
     rhs[i] = store.rhs[from] as number
     const typed = store.typed[from]
+    const kind = store.sources[store.source[from] as number]?.type
+    const isSharp = !typed?.measure.denominator || typed.value === 0 || typed.value === 1
+    isSum[i] = Number(typed ? isSharp : kind === 'definition' || kind === 'balance')
     relativeError[i] = typed ? (typed.value === 0 ? EXACT : typed.halfWidth / Math.abs(typed.value)) : EXACT
   }
   for (let j = 0; j < nColumns; j++) columnStart[j + 1]! += columnStart[j] as number
@@ -63,5 +69,18 @@ export function compileRows(store: RowStore, nColumns: number, use?: Uint8Array)
       placeOfEntry[at] = k
     }
   const stored = Int32Array.from(kept)
-  return { nRows, nColumns, start, column, value, rhs, relativeError, columnStart, rowOfEntry, placeOfEntry, stored }
+  return {
+    nRows,
+    nColumns,
+    start,
+    column,
+    value,
+    rhs,
+    relativeError,
+    isSum,
+    columnStart,
+    rowOfEntry,
+    placeOfEntry,
+    stored,
+  }
 }

@@ -93,6 +93,7 @@ export function peel(rows: CompiledRows, nonNegative: Uint8Array): Peeled {
 function oneSigned(rows: CompiledRows, row: number, known: Uint8Array, nonNegative: Uint8Array): number[] | undefined {
   const unknown: number[] = []
   let sign = 0
+  if (!rows.isSum[row]) return undefined
   for (let k = rows.start[row] as number; k < (rows.start[row + 1] as number); k++) {
     const j = rows.column[k] as number
     if (known[j]) continue

@@ -1,7 +1,7 @@
 import type { LinearForm, Measure } from '../measure/measure'
 import { seededRandom } from '../random'
 import type { Elimination } from '../sparse/elimination'
-import { MOVES, probe, solveParticular } from '../sparse/solve'
+import { MOVES, probe, solveParticular, type Vector } from '../sparse/solve'
 
 const PROBES = 3
 const SEED = 20_240_611
@@ -14,32 +14,37 @@ const ZERO_DENOMINATOR = 1e-9
  */
 export type Knowledge = {
   elimination: Elimination
-  /** Particular solution plus the first probe; length nColumns. */
-  generic: Float64Array
-  particular: Float64Array
+  /** Particular solution plus the first probe. */
+  generic: Vector
+  particular: Vector
   /** Empty where nothing is free. */
-  probes: Float64Array[]
+  probes: Vector[]
   random: () => number
 }
 
 export function gatherKnowledge(elimination: Elimination): Knowledge {
   const random = seededRandom(SEED)
   const particular = solveParticular(elimination)
-  const size = typicalSize(elimination)
-  const probes: Float64Array[] = []
-  if (elimination.free.length > 0)
-    for (let q = 0; q < PROBES; q++) probes.push(probe(elimination, random).map((value) => value * size))
-  const first = probes[0]
-  const generic = first ? particular.map((value, j) => value + (first[j] as number)) : particular
-  return { elimination, generic, particular, probes, random }
+  const scale = typicalSize(elimination)
+  const probes: Vector[] = []
+  if (elimination.free.length > 0) for (let q = 0; q < PROBES; q++) probes.push(probe(elimination, random, scale))
+  const [first] = probes
+  return { elimination, generic: first ? moved(particular, 1, first) : particular, particular, probes, random }
 }
 
 /** One more direction, for questions that three do not settle. */
-export function addProbe(knowledge: Knowledge): Float64Array {
-  const size = typicalSize(knowledge.elimination)
-  const direction = probe(knowledge.elimination, knowledge.random).map((value) => value * size)
+export function addProbe(knowledge: Knowledge): Vector {
+  const direction = probe(knowledge.elimination, knowledge.random, typicalSize(knowledge.elimination))
   knowledge.probes.push(direction)
   return direction
+}
+
+/** A point moved along a direction. */
+export function moved(point: Vector, factor: number, direction: Vector): Vector {
+  return {
+    value: point.value.map((value, j) => value + factor * (direction.value[j] as number)),
+    size: point.size.map((size, j) => Math.max(size, Math.abs(factor) * (direction.size[j] as number))),
+  }
 }
 
 /** Geometric mean of what the rows hold on the right, so that probes are of the size of the flows. */
@@ -54,16 +59,30 @@ function typicalSize({ rows }: Elimination): number {
   return count === 0 ? 1 : Math.exp(sum / count)
 }
 
-/** Value and size of the terms of a form at a point; a direction leaves the constant out. */
-export function evaluate(form: LinearForm, x: Float64Array, direction = false): { value: number; terms: number } {
+/** Digits lost in a difference count from here: a size that stands for a thousandth of a term. */
+export const LOST = 1e-3
+
+/**
+ * Value of a form at a point and the terms to hold it against: those of the sum, or what its unknowns were made of where
+ * they have lost digits. A direction leaves the constant out.
+ */
+export function evaluate(
+  form: LinearForm,
+  { value: x, size }: Vector,
+  direction = false,
+): { value: number; terms: number } {
   let value = direction ? 0 : form.constant
   let terms = Math.abs(value)
+  let made = 0
   for (let k = 0; k < form.columns.length; k++) {
-    const term = (form.coefficients[k] as number) * (x[form.columns[k] as number] as number)
+    const a = form.coefficients[k] as number
+    const j = form.columns[k] as number
+    const term = a * (x[j] as number)
     value += term
     terms += Math.abs(term)
+    made = Math.max(made, Math.abs(a) * (size[j] as number))
   }
-  return { value, terms }
+  return { value, terms: Math.max(terms, LOST * made) }
 }
 
 /** The value of a form where it is the same in every solution, else undefined. */

@@ -1,26 +1,15 @@
 import { Tracer, tension } from '../conflicts/circuit'
 import type { Model } from '../model'
 import { turnComposition } from '../pending/composition'
-import { type Pending, type TurnedRow, turnFormula, turnScaled } from '../pending/pending'
+import { type Pending, turnFormula, turnScaled } from '../pending/pending'
+import type { TurnedRow } from '../pending/turned-row'
 import type { Assembly } from '../rows/assemble'
 import { compileRows } from '../sparse/compiled-rows'
 import { eliminate } from '../sparse/elimination'
-import { gatherKnowledge, type Knowledge } from './knowledge'
+import { gatherKnowledge } from './knowledge'
 import { openRows } from './open-rows'
+import type { Resolved, Round } from './resolved'
 import { zeroSums } from './zero-sums'
-
-/** Rows that were added in one round, with the knowledge that they rest on. */
-export type Round = { knowledge: Knowledge; firstRow: number }
-
-export type Resolved = {
-  knowledge: Knowledge
-  /** Rules that could not be turned into rows. */
-  left: Pending[]
-  /** Earlier rounds, for tracing what an added row rests on. */
-  rounds: Round[]
-  /** Store row -> forms that an added row rests on. */
-  restsOn: Map<number, TurnedRow['restsOn']>
-}
 
 /** Half-widths times this are rounding: such rows hold, however much a long chain of differences blurs them. */
 export const AGREES_BY_FAR = 1e-6

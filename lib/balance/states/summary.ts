@@ -71,6 +71,7 @@ function keepColumns(rows: CompiledRows, columns: number[]): CompiledRows {
     value: Float64Array.from(value),
     rhs: new Float64Array(nRows),
     relativeError: new Float64Array(nRows),
+    isSum: new Uint8Array(nRows),
     columnStart,
     rowOfEntry,
     placeOfEntry,

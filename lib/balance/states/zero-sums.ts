@@ -14,13 +14,13 @@ export function zeroSums(model: Model, knowledge: Knowledge): ZeroSum[] {
   const { probes } = knowledge
   if (probes.length === 0) return []
   const sums: ZeroSum[] = []
-  const moves = (column: number): boolean => probes.some((h) => h[column] !== 0)
+  const moves = (column: number): boolean => probes.some((h) => h.value[column] !== 0)
   const found = new Set<number>()
   const look = (columns: number[]): void => {
     const open = columns.filter((column) => column >= 0 && moves(column))
     if (
       open.length === 0 ||
-      columns.some((column) => column >= 0 && !moves(column) && (knowledge.particular[column] as number) < 0)
+      columns.some((column) => column >= 0 && !moves(column) && (knowledge.particular.value[column] as number) < 0)
     )
       return
     const sum = { columns: open, coefficients: open.map(() => 1), constant: 0 }

@@ -1,0 +1,116 @@
+import { Tracer } from '../conflicts/circuit'
+import type { Settled } from '../conflicts/find-conflicts'
+import { combine, constantForm, type LinearForm, type Measure } from '../measure/measure'
+import { typedValue } from '../measure/typed-value'
+import type { Model } from '../model'
+import type { Given } from '../problem'
+import { seededRandom } from '../random'
+import { fixedRuleValue } from '../rows/assemble'
+import { CellFlag, CellState, type Solution } from '../solution'
+import { applyInverse } from '../sparse/solve'
+import { forEachCell } from './cells'
+import type { CellArrays } from './fill-cells'
+import { evaluate } from './knowledge'
+
+/** Relative change of a cell per relative change of its worst given from which it is flagged. */
+export const AMPLIFIED = 1e4
+/** From here the half-width that every value has at least moves a cell by more than itself: it is not known. */
+export const BLURRED = 1e9
+/** A quick estimate above this is looked at exactly. */
+const SUSPECT = 5e3
+/** Row entries times cells that may be spent on exact figures; beyond, the estimate stands. */
+const MOST_WORK = 1e7
+
+/**
+ * Finds cells that a small change of one typed value moves much. All typed values are changed at once, at random, to
+ * find suspects; the worst given of each suspect comes from the multipliers with which it rests on the rows. Cells
+ * beyond `BLURRED` lose their value and become unknown, in place.
+ */
+export function findAmplified(model: Model, settled: Settled, cells: CellArrays): Solution['amplification'] {
+  const { resolved, assembly } = settled
+  const { elimination: e, generic } = resolved.knowledge
+  const changes = [1, 2].map((seed) => applyInverse(e, randomChange(settled, seed)))
+  const tracer = new Tracer(model, assembly, resolved)
+  const found: Solution['amplification'] = []
+  let work = 0
+  forEachCell(model, ({ slot, measure }) => {
+    if (cells.states[slot] !== CellState.solvable) return
+    const value = cells.values[slot] as number
+    if (value === 0 || (measure.denominator && value === 1)) return
+    const { numerator, denominator } = measure
+    const size = Math.abs(denominator ? value * dot(denominator, generic.value) : value)
+    let factor = 0
+    for (const x of changes) {
+      const change = dot(numerator, x) - (denominator ? value * dot(denominator, x) : 0)
+      factor = Math.max(factor, Math.abs(change) / size)
+    }
+    if (!(factor > SUSPECT)) return
+    const form = sensitive(measure, value)
+    work += e.rows.column.length
+    if (work <= MOST_WORK) factor = worstGiven(model, tracer, settled, form, size) ?? factor
+    if (!(factor > AMPLIFIED)) return
+    found.push([slot, factor])
+    cells.flags[slot]! |= CellFlag.amplified
+    if (factor <= BLURRED) return
+    cells.states[slot] = CellState.unknown
+    cells.values[slot] = Number.NaN
+  })
+  return found
+}
+
+function dot(form: LinearForm, x: Float64Array): number {
+  let sum = 0
+  for (let k = 0; k < form.columns.length; k++)
+    sum += (form.coefficients[k] as number) * (x[form.columns[k] as number] as number)
+  return sum
+}
+
+const sensitive = ({ numerator, denominator }: Measure, value: number) =>
+  denominator ? combine(1, numerator, -value, denominator) : combine(1, numerator, 0, constantForm(0))
+
+/** Right-hand sides for a change of every typed value, and of every row turned linear, by all of itself with a random sign. */
+function randomChange({ resolved, assembly }: Settled, seed: number): Float64Array {
+  const { elimination: e, generic } = resolved.knowledge
+  const random = seededRandom(seed)
+  return Float64Array.from({ length: e.rows.nRows }, (_, i) => {
+    const row = e.rows.stored[i] as number
+    const typed = assembly.rows.typed[row]
+    const sign = random() < 0.5 ? -1 : 1
+    if (typed) {
+      const { denominator } = typed.measure
+      return sign * typed.value * (denominator ? evaluate(denominator, generic).value : 1)
+    }
+    if (!resolved.restsOn.has(row)) return 0
+    let most = 0
+    for (let k = e.rows.start[i] as number; k < (e.rows.start[i + 1] as number); k++)
+      most = Math.max(
+        most,
+        Math.abs((e.rows.value[k] as number) * (generic.value[e.rows.column[k] as number] as number)),
+      )
+    return sign * most
+  })
+}
+
+function worstGiven(
+  model: Model,
+  tracer: Tracer,
+  { resolved }: Settled,
+  form: ReturnType<typeof sensitive>,
+  size: number,
+): number | undefined {
+  const circuit = tracer.ofForm(resolved.knowledge.elimination, form)
+  if (!circuit) return undefined
+  const nGivens = model.problem.givens?.length ?? 0
+  let worst = 0
+  for (const [member, weight] of circuit.weight) {
+    const rule = model.problem.relations?.[member - nGivens]
+    const value =
+      member < nGivens
+        ? typedValue(model, (model.problem.givens as Given[])[member] as Given).value
+        : rule && 'value' in rule
+          ? (fixedRuleValue(model, rule.value) ?? 0)
+          : 1
+    worst = Math.max(worst, Math.abs(weight * value) / size)
+  }
+  return worst
+}
