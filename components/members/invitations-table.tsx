@@ -47,7 +47,7 @@ export function InvitationsTable({ invitations, resending, onResend, onRevoke }:
               size="small"
               busy={resending === invitation.id}
               onClick={() => onResend(invitation)}
-              aria-label={`Send the invitation of ${invitation.email} again`}
+              aria-label={`Send again: the invitation of ${invitation.email}`}
             >
               Send again
             </Button>

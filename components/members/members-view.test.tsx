@@ -212,7 +212,7 @@ describe('inviting', () => {
     const list = within(screen.getByRole('list', { name: 'Open invitations' }))
     expect(list.getByText('Has run out')).toBeInTheDocument()
     expect(list.getByText('Reader, Salt')).toBeInTheDocument()
-    await user.click(list.getByRole('button', { name: /Send the invitation/ }))
+    await user.click(list.getByRole('button', { name: /Send again: the invitation of eve/ }))
     expect(actions.resendInvitation).toHaveBeenCalledWith({ invitation: 'i1' })
     await user.click(list.getByRole('button', { name: /Withdraw the invitation/ }))
     expect(actions.revokeInvitation).not.toHaveBeenCalled()

@@ -35,7 +35,8 @@ export function useAction(options: { quiet?: boolean; words?: Words } = {}) {
     startTransition(async () => {
       const result = await action().catch((): Result<T> => ({ ok: false, error: lost }))
       if (result.ok) return done?.(result.value)
-      setError(result.error)
+      // Shown together with the end of being busy.
+      startTransition(() => setError(result.error))
       if (!options.quiet) notifyProblem(refusalSentence(result.error, options.words))
     })
   }

@@ -87,6 +87,7 @@ scenario('an invitation is taken up with an account, and told apart from another
   const stranger = await stage.anotherPerson()
   await stranger.goto(link)
   await stranger.getByRole('link', { name: 'Sign in to accept' }).click()
+  await stranger.waitForURL(/\/sign-in/)
   await stranger.getByLabel('E-mail').fill(address)
   await stranger.getByLabel('Password', { exact: true }).fill(newPassword)
   await stranger.keyboard.press('Enter')
@@ -109,6 +110,7 @@ scenario(
     const ask = async (email: string) => {
       await other.goto('/sign-in')
       await other.getByRole('link', { name: 'The password is lost' }).click()
+      await other.waitForURL(/\/reset/)
       await other.getByLabel('E-mail').fill(email)
       await other.getByRole('button', { name: 'Mail me a link' }).click()
       const heading = other.getByRole('heading', { name: 'Look in your mail' })
