@@ -1,4 +1,4 @@
-import { useCallback, useMemo, useState } from 'react'
+import { useCallback, useMemo, useRef, useState } from 'react'
 import {
   type Cell,
   extendTo,
@@ -28,10 +28,29 @@ export type GridCursor = {
   setEdit: (edit: GridEdit | null) => void
 }
 
-/** Where one pane's cursor stands, by ids: what is inserted before it does not shift it, what is removed gives way. */
-export function useGridCursor(rows: readonly GridRow[], columnIds: readonly string[], start: () => Cell): GridCursor {
+/**
+ * Where one pane's cursor stands, by ids: what is inserted before it does not shift it, what is removed gives way.
+ * `onLeft` is told of a refused entry that still stood in its cell when another cell is typed into.
+ */
+export function useGridCursor(
+  rows: readonly GridRow[],
+  columnIds: readonly string[],
+  start: () => Cell,
+  onLeft: (edit: GridEdit) => void,
+): GridCursor {
   const [selection, setSelection] = useState<Selection>(() => selectCell(start()))
-  const [edit, setEdit] = useState<GridEdit | null>(null)
+  const [edit, putEdit] = useState<GridEdit | null>(null)
+  const open = useRef(edit)
+  const setEdit = useCallback(
+    (next: GridEdit | null) => {
+      const was = open.current
+      const elsewhere = was && next && (was.place.row !== next.place.row || was.place.column !== next.place.column)
+      if (elsewhere && was.reason) onLeft(was)
+      open.current = next
+      putEdit(next)
+    },
+    [onLeft],
+  )
   const lines = useMemo(() => ({ rows: rows.map(({ id }) => id), columns: columnIds }), [rows, columnIds])
   const [lastLines, setLastLines] = useState<Lines>(lines)
   let current = selection

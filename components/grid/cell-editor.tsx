@@ -36,7 +36,7 @@ export function CellEditor({ edit, label, side, words, onCommit, onCancel }: Cel
   }, [edit.mode, edit.draft])
   useLayoutEffect(() => {
     if (edit.reason) done.current = false
-  }, [edit.reason])
+  }, [edit])
 
   const typed = text.trim().toLowerCase()
   const offered = words.filter((word) => word.toLowerCase().includes(typed)).slice(0, MOST_WORDS)
@@ -96,7 +96,8 @@ export function CellEditor({ edit, label, side, words, onCommit, onCancel }: Cel
         }}
         onKeyDown={onKeyDown}
         onMouseDown={() => setMode('edit')}
-        onBlur={() => (edit.reason ? onCancel() : finish(text, null))}
+        // What was refused stays in its cell, marked, until it is mended or given up.
+        onBlur={() => (edit.reason && text === edit.draft ? undefined : finish(text, null))}
         onCopy={(event) => event.stopPropagation()}
         onCut={(event) => event.stopPropagation()}
         onPaste={(event) => event.stopPropagation()}

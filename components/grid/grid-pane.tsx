@@ -71,7 +71,8 @@ export function GridPane(props: GridPaneProps) {
     if (focusColumn >= 2) scroll.showColumn(focusColumn - 2)
   }, [focusRow, focusColumn, frozen, virtualizer, scroll.showColumn])
   useEffect(() => {
-    if (isFocused.current && !edit) focusActive()
+    const typing = pane.current?.querySelector('input:focus')
+    if (isFocused.current && !typing && (!edit || edit.reason)) focusActive()
   }, [focusActive, edit])
 
   const pageRows = useCallback(() => Math.max(1, Math.floor((body.current?.clientHeight ?? 270) / 27) - 1), [])

@@ -46,6 +46,19 @@ describe('entries of the stream table', () => {
     expect([...state().stream.values()].map(({ tag }) => tag)).toContain('102A')
   })
 
+  it('keeps a refused tag in its cell when one goes elsewhere, and takes it once it is mended', async () => {
+    const { user, go, state } = openBench()
+    await go('Stream 102')
+    await user.keyboard('101{Enter}')
+    await go('Total flow, stream 104')
+    const editor = document.querySelector<HTMLInputElement>('.grid-editor')
+    expect(editor).toHaveValue('101')
+    expect(editor).toBeInvalid()
+    await user.click(editor as HTMLInputElement)
+    await user.keyboard('B{Enter}')
+    expect([...state().stream.values()].map(({ tag }) => tag)).toContain('101B')
+  })
+
   it('sets where a stream goes by the tag of a unit, with suggestions', async () => {
     const { user, go, said } = openBench()
     await go('To, stream 103')

@@ -6,7 +6,7 @@ import { PointMenu } from '@/components/grid/point-menu'
 import { Caution } from '@/components/ui/caution'
 import { notifyProblem } from '@/components/ui/toast'
 import type { BookHandle } from '@/hooks/book-handle'
-import { type GridPlace, NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
+import { type GridEdit, type GridPlace, NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
 import type { SolverHandle } from '@/hooks/solver-handle'
 import { useGridCursor } from '@/hooks/use-grid-cursor'
 import { inOrder } from '@/lib/book/state'
@@ -83,11 +83,14 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
   const streamIds = useStable(view.streams.map(({ id }) => id))
   const columnIds = useMemo(() => [NAME_COLUMN, UNIT_COLUMN, ...streamIds], [streamIds])
   const firstStream = inOrder(book.state.stream)[0]?.id ?? NAME_COLUMN
-  const tableCursor = useGridCursor(rows, columnIds, () => ({ row: valueRow('flow'), column: firstStream }))
-  const linksCursor = useGridCursor(unitRows, columnIds, () => ({
-    row: unitRows[0]?.id ?? '',
-    column: firstStream,
-  }))
+  const tableCursor = useGridCursor(
+    rows,
+    columnIds,
+    () => ({ row: valueRow('flow'), column: firstStream }),
+    sayNotTaken,
+  )
+  const unitStart = () => ({ row: unitRows[0]?.id ?? '', column: firstStream })
+  const linksCursor = useGridCursor(unitRows, columnIds, unitStart, sayNotTaken)
   const table = useMemo(
     () =>
       tableSource({
@@ -209,6 +212,9 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
     </div>
   )
 }
+
+/** A refused entry gives way to the next one: it is named, so that it can be typed again. */
+const sayNotTaken = ({ draft, reason }: GridEdit) => notifyProblem(`“${draft}” was not taken. ${reason ?? ''}`)
 
 /** The same list for as long as its ids are the same, so that columns are not made anew on every edit. */
 function useStable(ids: string[]): readonly string[] {
