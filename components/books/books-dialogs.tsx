@@ -1,6 +1,7 @@
 'use client'
 
 import { notify } from '@/components/ui/toast'
+import type { Basis } from './flow-unit-select'
 import { NameDialog } from './name-dialog'
 import { NewBookDialog } from './new-book-dialog'
 import type { BookRow, BooksActions, ProjectRow } from './types'
@@ -15,18 +16,20 @@ export type OpenDialog =
 type BooksDialogsProps = {
   open: OpenDialog | null
   projects: readonly ProjectRow[]
+  flowUnits: Record<Basis, string>
   actions: BooksActions
   onBook: (book: { id: string }) => void
   onClose: () => void
 }
 
-export function BooksDialogs({ open, projects, actions, onBook, onClose }: BooksDialogsProps) {
+export function BooksDialogs({ open, projects, flowUnits, actions, onBook, onClose }: BooksDialogsProps) {
   switch (open?.dialog) {
     case 'newBook':
       return (
         <NewBookDialog
           projects={projects}
           projectId={open.projectId}
+          flowUnits={flowUnits}
           createBook={actions.createBook}
           onDone={onBook}
           onClose={onClose}

@@ -60,6 +60,7 @@ function show(role: Role, more: Partial<BooksViewProps> = {}) {
         { id: 'p1', name: 'Salt works' },
       ]}
       isArchive={false}
+      flowUnits={{ mass: 't/d', mole: 'kmol/h' }}
       may={{
         readBooks: mayDo(role, 'book.read'),
         makeBooks: mayDo(role, 'book.create'),
@@ -213,6 +214,7 @@ describe('a new book', () => {
     expect(screen.getByRole('alert')).toHaveTextContent('Type a name for the book.')
     expect(actions.createBook).not.toHaveBeenCalled()
     await user.type(screen.getByLabelText('Name'), 'Gas section')
+    expect(screen.getByLabelText('Flow unit')).toHaveValue('t/d')
     await user.selectOptions(screen.getByLabelText('Basis'), 'mole')
     await user.selectOptions(screen.getByLabelText('Flow unit'), 'mol/s')
     await user.selectOptions(screen.getByLabelText('Project'), 'Salt works')

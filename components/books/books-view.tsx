@@ -11,6 +11,7 @@ import { BookMenu } from './book-menu'
 import { BooksDialogs, type OpenDialog } from './books-dialogs'
 import { BooksTable } from './books-table'
 import { BooksToolbar } from './books-toolbar'
+import type { Basis } from './flow-unit-select'
 import { NoBooks } from './no-books'
 import { ProjectMenu } from './project-menu'
 import type { BookRow, BooksActions, ProjectRow } from './types'
@@ -22,11 +23,13 @@ export type BooksViewProps = {
   isArchive: boolean
   /** What to draw; the verbs decide again. */
   may: { readBooks: boolean; makeBooks: boolean; archiveBooks: boolean; makeProjects: boolean; renameProjects: boolean }
+  /** What the team has chosen for new books. */
+  flowUnits: Record<Basis, string>
   actions: BooksActions
 }
 
 /** The books of a team: search, sort, make, copy, put away and take out again. */
-export function BooksView({ team, books, projects, isArchive, may, actions }: BooksViewProps) {
+export function BooksView({ team, books, projects, isArchive, may, flowUnits, actions }: BooksViewProps) {
   const router = useRouter()
   const { run } = useAction()
   const [search, setSearch] = useState('')
@@ -119,6 +122,7 @@ export function BooksView({ team, books, projects, isArchive, may, actions }: Bo
       <BooksDialogs
         open={open}
         projects={projects}
+        flowUnits={flowUnits}
         actions={actions}
         onBook={({ id }) => router.push(`/${team.slug}/books/${id}`)}
         onClose={() => setOpen(null)}

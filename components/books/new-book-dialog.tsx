@@ -16,13 +16,15 @@ type NewBookDialogProps = {
   projects: readonly ProjectRow[]
   /** The project to begin with. */
   projectId: string | undefined
+  /** What the team has chosen for new books. */
+  flowUnits: Record<Basis, string>
   createBook: BooksActions['createBook']
   onDone: (book: { id: string }) => void
   onClose: () => void
 }
 
 /** Asks what a new book starts from, its name and place. Mount it to open it. */
-export function NewBookDialog({ projects, projectId, createBook, onDone, onClose }: NewBookDialogProps) {
+export function NewBookDialog({ projects, projectId, flowUnits, createBook, onDone, onClose }: NewBookDialogProps) {
   const { run, isBusy, refusal } = useAction({ quiet: true })
   const [start, setStart] = useState<'blank' | StarterId>('blank')
   const [basis, setBasis] = useState<Basis>('mass')
@@ -100,7 +102,9 @@ export function NewBookDialog({ projects, projectId, createBook, onDone, onClose
               )}
             </Field>
             <Field label="Flow unit" hint="Values in other units are understood too.">
-              {(field) => <FlowUnitSelect {...field} key={basis} name="flowUnit" basis={basis} />}
+              {(field) => (
+                <FlowUnitSelect {...field} key={basis} name="flowUnit" basis={basis} defaultValue={flowUnits[basis]} />
+              )}
             </Field>
           </div>
         )}

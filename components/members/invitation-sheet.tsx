@@ -9,7 +9,7 @@ import { authClient } from '@/lib/auth/client'
 import type { InvitationLook } from '@/lib/data/invitation/look-invitation'
 import { Day } from './day'
 import { JoinForm } from './join-form'
-import { aRole, listed, roleWords } from './role-words'
+import { aRole, listed, roleSentence } from './role-words'
 import type { InvitationActions } from './types'
 
 type InvitationSheetProps = { look: InvitationLook; token: string; actions: InvitationActions }
@@ -21,7 +21,7 @@ export function InvitationSheet({ look, token, actions }: InvitationSheetProps) 
     <div className="grid gap-4">
       <section aria-label="The invitation" className="sheet grid gap-2 p-5 sm:p-6">
         <p>
-          You are asked to come in as <strong>{aRole(role)}</strong>. {roleWords[role].may}
+          You are asked to come in as <strong>{aRole(role)}</strong>. {roleSentence(role)}
         </p>
         {projects.length > 0 ? (
           <p>

@@ -19,7 +19,7 @@ type MembersTableProps = {
 }
 
 const head = 'border-b border-hair px-3 py-2 text-start font-normal text-ink-2'
-const cell = 'border-b border-hair px-3 py-2.5 align-top max-sm:block max-sm:border-0 max-sm:py-0.5'
+const cell = 'border-b border-hair px-3 py-2.5 max-sm:block max-sm:border-0 max-sm:py-0.5'
 
 /** The people of a team. On a narrow screen each is a block of lines. */
 export function MembersTable({ members, pending, onRole, memberActions }: MembersTableProps) {
@@ -37,7 +37,7 @@ export function MembersTable({ members, pending, onRole, memberActions }: Member
           <th scope="col" className={head}>
             Projects
           </th>
-          <th scope="col" className={`${head} w-52`}>
+          <th scope="col" className={`${head} w-60`}>
             State
           </th>
           {memberActions ? (
@@ -118,8 +118,8 @@ function StateWords({ member }: { member: MemberRow }) {
       </>
     )
   return (
-    <span className="text-sm">
-      In the team since <Day at={member.joinedAt} />
+    <span className="text-sm whitespace-nowrap">
+      Active since <Day at={member.joinedAt} />
     </span>
   )
 }

@@ -1,5 +1,5 @@
 import { type Role, roles } from '@/lib/auth/permissions'
-import { roleName, roleWords } from './role-words'
+import { mayWords, roleName, roleWords } from './role-words'
 
 type RoleChoiceProps = { value: Role; onChange: (role: Role) => void }
 
@@ -25,7 +25,7 @@ export function RoleChoice({ value, onChange }: RoleChoiceProps) {
             <span>
               <span className="font-semibold">{roleName(role)}</span>{' '}
               <span className="text-xs text-ink-3">{roleWords[role].who}</span>
-              <span className="block text-sm text-ink-2">{roleWords[role].may}</span>
+              <span className="block text-sm text-ink-2">{mayWords(role)}</span>
             </span>
           </label>
         ))}

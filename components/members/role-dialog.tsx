@@ -5,7 +5,7 @@ import { AskDialog } from '@/components/ui/ask-dialog'
 import { type Role, seesEveryProject } from '@/lib/auth/permissions'
 import { ProjectChecks } from './project-checks'
 import { lostActions } from './role-change'
-import { aRole, roleWords } from './role-words'
+import { aRole, roleSentence } from './role-words'
 import type { MemberRow, MembersActions, ProjectChoice } from './types'
 
 type RoleDialogProps = {
@@ -33,7 +33,7 @@ export function RoleDialog({ member, role, projects, changeRole, onDone, onClose
       onDone={onDone}
       onClose={onClose}
     >
-      <p>{roleWords[role].may}</p>
+      <p>{roleSentence(role)}</p>
       {role === 'owner' ? (
         <p>{member.name} could then change everything here, and take the role of owner from you too.</p>
       ) : null}

@@ -1,8 +1,8 @@
 import Link from 'next/link'
-import { When } from '@/components/books/when'
 import { buttonClasses } from '@/components/ui/button'
 import type { TeamEventView } from '@/lib/data/audit/list-team-events'
 import { eventSentence } from './event-words'
+import { Moment } from './moment'
 
 type EventsListProps = {
   events: readonly TeamEventView[]
@@ -30,10 +30,10 @@ export function EventsList({ events, older, newest }: EventsListProps) {
           {events.map((event) => (
             <li
               key={event.id}
-              className="grid gap-x-4 border-b border-hair px-3 py-2 last:border-b-0 sm:grid-cols-[9rem_1fr]"
+              className="grid gap-x-4 border-b border-hair px-3 py-2 last:border-b-0 sm:grid-cols-[11rem_1fr]"
             >
-              <span className="text-sm text-ink-2">
-                <When at={event.at} />
+              <span className="text-sm leading-[1.6] text-ink-2 tabular-nums">
+                <Moment at={event.at} />
               </span>
               <span className="wrap-anywhere">{eventSentence(event)}</span>
             </li>

@@ -79,12 +79,12 @@ export function SettingsForm({ settings, mayChange, updateSettings }: SettingsFo
               </Select>
             )}
           </Field>
-          <Field id="massFlowUnit" label="New books by mass" error={wrong('massFlowUnit')}>
+          <Field id="massFlowUnit" label="Flow unit of new books by mass" error={wrong('massFlowUnit')}>
             {(field) => (
               <FlowUnitSelect {...field} basis="mass" name="massFlowUnit" defaultValue={settings.massFlowUnit} />
             )}
           </Field>
-          <Field id="moleFlowUnit" label="New books by moles" error={wrong('moleFlowUnit')}>
+          <Field id="moleFlowUnit" label="Flow unit of new books by moles" error={wrong('moleFlowUnit')}>
             {(field) => (
               <FlowUnitSelect {...field} basis="mole" name="moleFlowUnit" defaultValue={settings.moleFlowUnit} />
             )}

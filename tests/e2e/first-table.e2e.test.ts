@@ -88,7 +88,7 @@ scenario(
     }
 
     // Total flow of F, its salt fraction, and the salt fraction of P; the water is pure.
-    await tabTo(/stream f|total flow/i)
+    await tabTo(/, stream [fwp]\b|total flow/i)
     await press('Control+Home')
     const to = async (place: string) => {
       for (let step = 0; step < 40; step++) {

@@ -4,6 +4,7 @@ import { Caution } from '@/components/ui/caution'
 import { mayDo } from '@/lib/auth/permissions'
 import { listBooks } from '@/lib/data/book/list-books'
 import { listProjects } from '@/lib/data/project/list-projects'
+import { getTeamSettings } from '@/lib/data/settings/get-team-settings'
 import { openTeam, valueFor } from '../open-team'
 import { archiveBook, createBook, createProject, duplicateBook, renameProject, restoreBook } from './actions'
 
@@ -14,10 +15,12 @@ export default async function BooksPage({ params, searchParams }: PageProps<'/[t
   const isArchive = (await searchParams).archived === '1'
   const path = `/${slug}/books${isArchive ? '?archived=1' : ''}`
   const { ctx, team } = await openTeam(slug, path)
-  const [projects, books] = await Promise.all([
+  const [projects, books, settings] = await Promise.all([
     listProjects(ctx, { team: slug }),
     listBooks(ctx, { team: slug, archived: isArchive }),
+    getTeamSettings(ctx, { team: slug }),
   ])
+  const { massFlowUnit: mass, moleFlowUnit: mole } = valueFor(settings, path)
   return (
     <div className="mx-auto flex min-h-(--page-height) max-w-[1240px] flex-col">
       <main id="main" className="flex-1">
@@ -33,6 +36,7 @@ export default async function BooksPage({ params, searchParams }: PageProps<'/[t
             makeProjects: mayDo(team.role, 'project.create'),
             renameProjects: mayDo(team.role, 'project.rename'),
           }}
+          flowUnits={{ mass, mole }}
           actions={{
             createBook: createBook.bind(null, slug),
             duplicateBook: duplicateBook.bind(null, slug),
