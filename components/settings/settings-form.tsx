@@ -94,7 +94,7 @@ export function SettingsForm({ settings, mayChange, updateSettings }: SettingsFo
           <DigitsSelect
             field="carriedDigits"
             label="Digits of carried notes"
-            hint="Density, temperature and the like."
+            hint="Kept for you; no screen uses it yet."
             value={settings.carriedDigits}
           />
         </Part>
@@ -102,28 +102,28 @@ export function SettingsForm({ settings, mayChange, updateSettings }: SettingsFo
           <PercentField
             field="closureLimit"
             label="A balance closes within"
-            hint="Of what passes through. Common practice: 0.1 to 1 %."
+            hint="Of what passes through, in the exported closure sheet. Common practice: 0.1 to 1 %."
             value={settings.closureLimit}
             error={wrong('closureLimit')}
           />
           <PercentField
             field="weakLimit"
             label="A solved value is weak above"
-            hint="Its standard deviation, of the value."
+            hint="Its standard deviation, of the value. No screen uses it yet."
             value={settings.weakLimit}
             error={wrong('weakLimit')}
           />
           <PercentField
             field="analysisLow"
             label="An analysis is complete from"
-            hint="Its sum. Common practice: 98 to 102 %."
+            hint="Its sum. Common practice: 98 to 102 %. No screen uses it yet."
             value={settings.analysisLow}
             error={wrong('analysisLow')}
           />
           <PercentField
             field="analysisHigh"
             label="An analysis is complete up to"
-            hint="Its sum."
+            hint="Its sum. No screen uses it yet."
             value={settings.analysisHigh}
             error={wrong('analysisHigh')}
           />

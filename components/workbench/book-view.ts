@@ -9,6 +9,10 @@ import { type RowQuantity, rowQuantityOf } from './rows'
 
 type Given = RecordOf<'given'>
 
+/** Significant digits of what follows, by kind of row; null: as many as the size asks for. */
+export type Digits = { flow: number | null; fraction: number | null }
+const digitsBySize: Digits = { flow: null, fraction: null }
+
 /** A book with its newest answer, indexed for the screen. Built anew when either changes; linear in the records. */
 export type BookView = {
   state: BookState
@@ -16,6 +20,7 @@ export type BookView = {
   caseId: CaseId
   mayEdit: boolean
   decimal: DecimalSign
+  digits: Digits
   units: BookUnits | undefined
   streams: readonly RecordOf<'stream'>[]
   components: readonly RecordOf<'component'>[]
@@ -39,6 +44,7 @@ export function bookView(
   solved: SolvedCase | null,
   mayEdit: boolean,
   decimal: DecimalSign,
+  digits: Digits = digitsBySize,
 ): BookView {
   const book = bookOf(state)
   const givensAt = new Map<string, Given[]>()
@@ -74,6 +80,7 @@ export function bookView(
     caseId,
     mayEdit,
     decimal,
+    digits,
     units: bookUnits(book.basis, book.flowUnit),
     streams,
     components: inOrder(state.component),

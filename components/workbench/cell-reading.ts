@@ -137,7 +137,8 @@ export function shownNumber(view: BookView, quantity: RowQuantity, reading: Read
     const typed = inRow(view, quantity, reading.given)
     return formatNumber(reading.value, style, { decimal, typed: true, halfWidth: typed?.halfWidth ?? null })
   }
-  return formatNumber(reading.value, style, { decimal, extraDigits })
+  const digits = isFraction(quantity) ? view.digits.fraction : view.digits.flow
+  return formatNumber(reading.value, style, { decimal, digits, extraDigits })
 }
 
 export const stateWords: Record<ReadState, string> = {

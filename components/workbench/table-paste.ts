@@ -70,7 +70,7 @@ function pasteEdit(
 ): { absent: number; edit: () => Edit } {
   const { state } = view
   const cellsIn = (current: BookState, inLines: Lines) => {
-    const inView = bookView(current, view.caseId, view.solved, view.mayEdit, view.decimal)
+    const inView = bookView(current, view.caseId, view.solved, view.mayEdit, view.decimal, view.digits)
     const placed = placeBlock(inLines, selection, block.rows)
     const givens = placed.cells.flatMap((cell) => readTyped(inView, cell, cell.text, block.decimal) ?? [])
     const fields = placed.cells.filter(({ row, column }) => readRow(row)?.kind === 'field' && !isHead(column))

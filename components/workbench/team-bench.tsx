@@ -5,6 +5,7 @@ import { notifyProblem } from '@/components/ui/toast'
 import { type OpenedBook, useBook } from '@/hooks/use-book'
 import { useSolver } from '@/hooks/use-solver'
 import { inOrder } from '@/lib/book/state'
+import type { Digits } from './book-view'
 import type { DecimalChoice } from './use-reader'
 import { Workbench } from './workbench'
 
@@ -13,10 +14,11 @@ type TeamBenchProps = {
   crumb: { label: string; href: string }
   readOnly: string | null
   decimal: DecimalChoice
+  digits: Digits
 }
 
 /** A book kept on the server, at work. */
-export function TeamBench({ opened, crumb, readOnly, decimal }: TeamBenchProps) {
+export function TeamBench({ opened, crumb, readOnly, decimal, digits }: TeamBenchProps) {
   const book = useBook(opened, notifyProblem)
   const [caseId] = useState(() => inOrder(book.state.case)[0]?.id ?? '')
   const solver = useSolver(book.state, caseId)
@@ -26,6 +28,7 @@ export function TeamBench({ opened, crumb, readOnly, decimal }: TeamBenchProps) 
       solver={solver}
       caseId={caseId}
       decimal={decimal}
+      digits={digits}
       crumb={crumb}
       downloadHref={`/api/books/${opened.id}/table.xlsx`}
       {...(readOnly === null ? {} : { readOnly })}

@@ -12,7 +12,7 @@ import { useGridCursor } from '@/hooks/use-grid-cursor'
 import { inOrder } from '@/lib/book/state'
 import { BenchBody } from './bench-body'
 import { BenchHeader } from './bench-header'
-import { bookView } from './book-view'
+import { bookView, type Digits } from './book-view'
 import { type Desk, type DialogRequest, type Offer, runner } from './desk'
 import { BenchDialogs } from './dialogs/bench-dialogs'
 import { linksRows, linksSource } from './links-source'
@@ -39,6 +39,8 @@ export type WorkbenchProps = {
   readOnly?: string
   /** The decimal sign that the team has chosen; left out: that of the person's own language. */
   decimal?: DecimalChoice
+  /** Significant digits that the team has chosen. Keep the same object from one drawing to the next. */
+  digits?: Digits
   downloadHref?: string | null
   headerEnd?: React.ReactNode
 }
@@ -48,6 +50,7 @@ const startOpen: ReadonlySet<SectionKey> = new Set(['fraction', 'componentFlow']
 /** One book at work: header, strip, sheet, panels and cell card, over any handle of a book. */
 export function Workbench({ book, solver, caseId, crumb = null, kept = 'All changes kept', ...props }: WorkbenchProps) {
   const decimal = useDecimal(props.decimal ?? 'own')
+  const { digits } = props
   const [open, setOpen] = useState(startOpen)
   const [panel, setPanel] = useState<PanelKey>('connections')
   const [pane, setPane] = useState<'table' | 'links'>('table')
@@ -58,8 +61,8 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
   const root = useRef<HTMLDivElement>(null)
 
   const view = useMemo(
-    () => bookView(book.state, caseId, solver.solved, book.mayEdit, decimal),
-    [book.state, caseId, solver.solved, book.mayEdit, decimal],
+    () => bookView(book.state, caseId, solver.solved, book.mayEdit, decimal, digits),
+    [book.state, caseId, solver.solved, book.mayEdit, decimal, digits],
   )
   const desk = useMemo((): Desk => {
     const run = runner(book.edit)

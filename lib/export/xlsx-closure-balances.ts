@@ -6,7 +6,6 @@ import { type Live, nextRow, putLive, putNumber, putText } from './xlsx-cells'
 import {
   at,
   type ClosureSheet,
-  closureLimit,
   columns,
   limitCell,
   putAmount,
@@ -145,7 +144,7 @@ function putBalance(context: ClosureSheet, row: Row, balance: Balance): void {
 }
 
 function findingOf(
-  { throughput }: ClosureSheet,
+  { throughput, limit }: ClosureSheet,
   row: number,
   difference: number | null,
   into: number | null,
@@ -158,6 +157,6 @@ function findingOf(
   const allowed = `MAX(${limitCell}/100*MAX(ABS(${i}),ABS(${o})),${rounding}*${throughputCell})`
   const formula = `IF(ISNUMBER(${d}),IF(ABS(${d})<=${allowed},"${closed}","does not close"),${d})`
   if (difference === null) return { formula, result: openText }
-  const most = Math.max((closureLimit / 100) * Math.max(Math.abs(into ?? 0), Math.abs(out ?? 0)), rounding * throughput)
+  const most = Math.max((limit / 100) * Math.max(Math.abs(into ?? 0), Math.abs(out ?? 0)), rounding * throughput)
   return { formula, result: Math.abs(difference) <= most ? closed : 'does not close' }
 }

@@ -29,7 +29,7 @@ export type ColumnName = keyof typeof columns
 export const spare = { in: 13, out: 53, formed: 93 } as const
 
 /** Per cent. Common practice: 0.1 to 1. Written in a cell, so that the reader can set another. */
-export const closureLimit = 0.1
+export const usualClosureLimit = 0.1
 
 /** Part of the largest flow that rounding alone may leave. */
 export const rounding = 1e-9
@@ -44,6 +44,8 @@ export type ClosureSheet = {
   table: StreamTable
   closure: ClosureModel
   places: Places
+  /** Per cent. */
+  limit: number
   /** Largest total flow. */
   throughput: number
   /** One format for every difference: a millionth of the throughput shows, rounding does not. */

@@ -6,7 +6,7 @@ import type { TitleBlock } from './title-block'
 import { lastRowOf, nextRow, putLive, putNumber, putText } from './xlsx-cells'
 import { putGroup } from './xlsx-closure-balances'
 import { putContents, putExtents, putFormations } from './xlsx-closure-reactions'
-import { type ClosureSheet, closureLimit, closureSheetName, limitCell, throughputCell } from './xlsx-closure-sheet'
+import { type ClosureSheet, closureSheetName, limitCell, throughputCell, usualClosureLimit } from './xlsx-closure-sheet'
 import { putStreamChecks } from './xlsx-closure-streams'
 import { paper, setUpPage } from './xlsx-page'
 import type { Places } from './xlsx-stream-table'
@@ -34,6 +34,7 @@ export function addClosureSheet(
   closure: ClosureModel,
   title: TitleBlock,
   places: Places,
+  limit = usualClosureLimit,
 ): void {
   const sheet = workbook.addWorksheet(closureSheetName)
   widths.forEach((width, index) => {
@@ -46,6 +47,7 @@ export function addClosureSheet(
     table,
     closure,
     places,
+    limit,
     throughput,
     differenceFormat: fixedFormat(0, Math.min(8, decimalsFor(throughput || 1, 6))),
     extents: [],
@@ -65,12 +67,12 @@ export function addClosureSheet(
   setUpPage(sheet, title, { paperSize: paper.a4, printTitlesRow: `${headRow}:${headRow}` })
 }
 
-function putHead({ sheet, table, places, throughput }: ClosureSheet): void {
+function putHead({ sheet, table, places, limit, throughput }: ClosureSheet): void {
   putText(nextRow(sheet, 22).getCell(1), 'Closure, by live formulas over the stream table', style.title)
-  const limit = nextRow(sheet)
-  putText(limit.getCell(1), 'Counts as closed: a difference of at most', style.plain)
-  putNumber(limit.getCell(4), closureLimit, '0.###', style.figure)
-  putText(limit.getCell(5), '% of what enters or leaves. Change it here.', style.plain)
+  const line = nextRow(sheet)
+  putText(line.getCell(1), 'Counts as closed: a difference of at most', style.plain)
+  putNumber(line.getCell(4), limit, '0.###', style.figure)
+  putText(line.getCell(5), '% of what enters or leaves. Change it here.', style.plain)
   const largest = nextRow(sheet)
   putText(largest.getCell(1), `Largest total flow, ${table.flowUnit}`, style.plain)
   const key = rowKey('flow', null)
@@ -79,8 +81,8 @@ function putHead({ sheet, table, places, throughput }: ClosureSheet): void {
   const formula = `MAX(MAX(${row}),0-MIN(${row}),0)`
   putLive(largest.getCell(4), { formula, result: throughput }, numberFormat(throughput, 6), style.figure)
   putText(largest.getCell(5), 'Difference = in - out + formed - gain of what is held', style.plain)
-  const line = nextRow(sheet, 28)
+  const headLine = nextRow(sheet, 28)
   heads.forEach((text, index) => {
-    putText(line.getCell(index + 1), text, index < 3 || index === 10 ? style.headLeft : style.head)
+    putText(headLine.getCell(index + 1), text, index < 3 || index === 10 ? style.headLeft : style.head)
   })
 }

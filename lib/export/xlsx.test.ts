@@ -57,6 +57,12 @@ describe('the workbook', () => {
     expect(rowStarting(table(), 'M  Mixer', 'mixer').values.slice(2, 6)).toEqual(['in', 'in', 'out', null])
   })
 
+  it('judges closure by the usual limit, or by the one that the team has chosen', async () => {
+    expect(cellAt(sheetOf(workbook, 'Closure'), 'D2')).toMatchObject({ v: 0.1 })
+    const chosen = readWorkbook(await workbookOf({ ...open, closureLimit: 0.5 }))
+    expect(cellAt(sheetOf(chosen, 'Closure'), 'D2')).toMatchObject({ v: 0.5 })
+  })
+
   it('tells states by fill', () => {
     const { number } = rowStarting(table(), 'Total flow')
     const patterns = ['C', 'D', 'E', 'F'].map((column) => {

@@ -22,6 +22,8 @@ export type WorkbookInput = {
   /** Number of the book's last change. */
   bookNumber: number
   engineVersion: string
+  /** Up to which difference a balance counts as closed, per cent; left out: the usual one. */
+  closureLimit?: number
 }
 
 /** The stream table as a workbook: the table, its closure by live formulas, the givens with their sources, and notes. */
@@ -44,7 +46,7 @@ export async function streamTableWorkbook(input: WorkbookInput): Promise<Uint8Ar
   // Programs that calculate do so on opening; the stored values serve those that do not.
   workbook.calcProperties.fullCalcOnLoad = true
   const places = addStreamSheet(workbook, table, title)
-  addClosureSheet(workbook, table, closureModel(problem, solution), title, places)
+  addClosureSheet(workbook, table, closureModel(problem, solution), title, places, input.closureLimit)
   addGivensSheet(workbook, givens, title)
   addNotesSheet(workbook, notesOf({ ...input, table, givens }), title)
   return new Uint8Array(await workbook.xlsx.writeBuffer()) as Uint8Array<ArrayBuffer>

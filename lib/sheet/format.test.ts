@@ -76,3 +76,16 @@ it('gives the clipboard text that reads back as the same number', () => {
     }),
   )
 })
+
+describe('digits that a team has chosen', () => {
+  it.each([
+    [10938.7, 3, '10\u00a0939'],
+    [322.85, 5, '322.85'],
+    [9.9996, 3, '10.0'],
+    [0.0123456, 4, '0.01235'],
+    [0, 4, '0'],
+    [-5.3079, 3, '\u22125.31'],
+  ])('%d with %d is %s', (value, digits, text) => {
+    expect(formatNumber(value, 'flow', { digits })).toBe(text)
+  })
+})

@@ -19,17 +19,20 @@ export type FormatOptions = {
   typed?: boolean
   /** Half a unit in the last typed digit, in the row's unit: that digit is shown even when it is 0. */
   halfWidth?: number | null
+  /** So many significant digits instead of those that the size asks for; whole digits are never dropped. */
+  digits?: number | null
   /** A further digit or more, as the cell card shows. */
   extraDigits?: number
 }
 
 export function formatNumber(value: number, style: NumberStyle, options: FormatOptions = {}): string {
   if (!Number.isFinite(value)) return '?'
-  const { decimal = 'point', typed = false, halfWidth = null, extraDigits = 0 } = options
+  const { decimal = 'point', typed = false, halfWidth = null, extraDigits = 0, digits = null } = options
   const size = Math.abs(value)
   const sign = value < 0 ? MINUS : ''
-  if (size !== 0 && (size < 1e-4 || size >= 1e12)) return sign + withExponent(size, 3 + extraDigits, decimal)
-  let decimals = decimalsOf(size, style) + extraDigits
+  if (size !== 0 && (size < 1e-4 || size >= 1e12))
+    return sign + withExponent(size, (digits ?? 3) + extraDigits, decimal)
+  let decimals = (digits === null ? decimalsOf(size, style) : decimalsFor(size, digits)) + extraDigits
   if (size === 0 || (style === 'percent' && size === 100)) decimals = extraDigits
   if (typed) decimals = Math.max(decimals, decimalsTyped(size))
   if (halfWidth !== null && halfWidth > 0) decimals = Math.max(decimals, Math.ceil(-Math.log10(2 * halfWidth) - 1e-9))
@@ -59,6 +62,13 @@ function decimalsOf(size: number, style: NumberStyle): number {
     case 'fraction':
       return size >= 0.000995 ? 4 : Math.max(4, significant(size, 2))
   }
+}
+
+/** Decimals that show `digits` significant ones, counted after rounding: 9.999 with three is 10.0. */
+function decimalsFor(size: number, digits: number): number {
+  if (size === 0) return 0
+  const exponent = Number(size.toExponential(digits - 1).split('e')[1])
+  return Math.max(0, digits - 1 - exponent)
 }
 
 /** Decimals that show `digits` significant ones, without closing zeros that say nothing. */

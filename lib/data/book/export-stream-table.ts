@@ -8,6 +8,7 @@ import { fileName } from '@/lib/export/file-name'
 import { streamTableOffThread } from '@/lib/export/off-thread'
 import type { StreamTableRequest } from '@/lib/export/stream-table-file'
 import { atBook } from '../door/enter'
+import { settingsOf } from '../door/team-settings'
 import { recordId, teamSlug } from '../door/words'
 import { stateOfBook } from '../records/load'
 
@@ -54,7 +55,8 @@ function readRequest(ctx: Context, given: z.input<typeof input>): Promise<Result
         caseName: operatingCase.name,
         basis: `${book.basis === 'mass' ? 'Mass' : 'Mole'}, ${book.flowUnit}`,
       }
-      return ok({ state, caseId: operatingCase.id, title, bookNumber: book.number })
+      const { closureLimit } = await settingsOf(tx, team.id)
+      return ok({ state, caseId: operatingCase.id, title, bookNumber: book.number, closureLimit })
     },
     { readOnly: true },
   )
