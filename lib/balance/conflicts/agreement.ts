@@ -1,5 +1,5 @@
 import type { Member } from '../rows/members'
-import type { Circuit } from './circuit'
+import { type Circuit, ROUNDING } from './circuit'
 
 /** How far values must move for all circuits to close, in half-widths, and a compromise that closes them. */
 export type Agreement = { tension: number; change: Map<Member, number> }
@@ -13,10 +13,15 @@ const SWEEPS = 60
  */
 export function agree(circuits: readonly Circuit[]): Agreement {
   const members = [...new Set(circuits.flatMap((circuit) => [...circuit.reach.keys()]))].sort((a, b) => a - b)
-  const rows = circuits.map(({ reach }) => members.map((member) => reach.get(member) ?? 0))
+  // Each gap may also close by its own rounding: two nearly equal circuits would else contradict each other by noise.
+  const rows = circuits.map(({ reach, terms }, r) => [
+    ...members.map((member) => reach.get(member) ?? 0),
+    ...circuits.map((_, other) => (other === r ? ROUNDING * terms : 0)),
+  ])
   const gaps = circuits.map(({ gap }) => gap)
-  let weights = members.map(() => 1)
-  let moves = members.map(() => 0)
+  const places = [...members, ...circuits]
+  let weights = places.map(() => 1)
+  let moves = places.map(() => 0)
   let plain: number[] | undefined
   let above = Number.POSITIVE_INFINITY
   let below = 0
@@ -26,7 +31,7 @@ export function agree(circuits: readonly Circuit[]): Agreement {
     )
     const multipliers = solveDense(normal, gaps)
     if (!multipliers) return { tension: Number.POSITIVE_INFINITY, change: new Map() }
-    const pulls = members.map((_, k) =>
+    const pulls = places.map((_, k) =>
       rows.reduce((sum, row, r) => sum + (row[k] as number) * (multipliers[r] as number), 0),
     )
     moves = pulls.map((pull, k) => -pull * (weights[k] as number))
@@ -38,7 +43,7 @@ export function agree(circuits: readonly Circuit[]): Agreement {
     if (above <= 1 || below > 1 || above - below < 1e-6 * above) break
     const next = weights.map((weight, k) => weight * Math.abs(pulls[k] as number))
     const sum = next.reduce((total, weight) => total + weight, 0)
-    weights = next.map((weight) => (weight * members.length) / sum)
+    weights = next.map((weight) => (weight * places.length) / sum)
   }
   const settled = plain && Math.max(...plain.map(Math.abs)) <= 1 ? plain : moves
   return {

@@ -31,7 +31,7 @@ const NOISE = 1e-12
 const CANCELS = 1e-9
 
 /** Rounding of a sum beside its terms, with room for long chains. */
-const ROUNDING = 1e-13
+export const ROUNDING = 1e-13
 
 /** Traces rows back to what was typed. */
 export class Tracer {
@@ -76,14 +76,18 @@ export class Tracer {
     for (let i = 0; i < y.length; i++)
       if ((sizes[i] as number) > NOISE * largest)
         this.addRow(circuit, e.rows.stored[i] as number, sign * (y[i] as number))
-    circuit.terms = sizes.reduce((sum, size) => sum + size, 0)
+    // A row that was turned linear is rounded as much more as it is blurred by what it rests on.
+    circuit.terms = sizes.reduce(
+      (sum, size, i) => sum + size * (this.resolved.blur.get(e.rows.stored[i] as number) ?? 1),
+      0,
+    )
     for (const [member, weight] of circuit.weight)
       if (Math.abs(weight) <= CANCELS * (this.parts.get(member) as number)) {
         circuit.weight.delete(member)
         circuit.reach.delete(member)
       }
     this.parts = parts
-    return settleGap(circuit)
+    return circuit
   }
 
   /** Largest term of a row at the generic solution, so that rows are compared by what they weigh there. */
@@ -152,12 +156,13 @@ function add(map: Map<Member, number>, member: Member, value: number): void {
   map.set(member, (map.get(member) ?? 0) + value)
 }
 
-/** Ratio of the gap to what the half-widths of the members can make of it: above 1 they cannot all hold. */
-export function tension({ gap, reach }: Circuit): number {
+/** Ratio of the gap, less its rounding, to what the half-widths of the members can make of it: above 1 they cannot all hold. */
+export function tension({ gap, terms, reach }: Circuit): number {
+  const beyond = Math.abs(gap) - ROUNDING * terms
+  if (beyond <= 0) return 0
   let sum = 0
   for (const value of reach.values()) sum += Math.abs(value)
-  if (gap === 0) return 0
-  return sum === 0 ? Number.POSITIVE_INFINITY : Math.abs(gap) / sum
+  return sum === 0 ? Number.POSITIVE_INFINITY : beyond / sum
 }
 
 /** a x left + b x right. */
@@ -177,17 +182,11 @@ export function combineCircuits(a: number, left: Circuit, b: number, right: Circ
     weight.delete(member)
     reach.delete(member)
   }
-  return settleGap({
+  return {
     gap: a * left.gap + b * right.gap,
     terms: Math.abs(a) * left.terms + Math.abs(b) * right.terms,
     weight,
     reach,
     structure: new Set([...left.structure, ...right.structure]),
-  })
-}
-
-/** A gap that is rounding beside its terms is 0. */
-function settleGap(circuit: Circuit): Circuit {
-  if (Math.abs(circuit.gap) <= ROUNDING * circuit.terms) circuit.gap = 0
-  return circuit
+  }
 }

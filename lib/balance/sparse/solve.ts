@@ -1,8 +1,8 @@
 import type { Elimination } from './elimination'
 import { NOTHING } from './peel'
 
-/** In a probe, what is left of an entry below this part of its terms does not move. */
-export const MOVES = 1e-9
+/** In a probe, what is left of an entry below this part of its terms does not move. A trace of a part in 1e9 does. */
+export const MOVES = 1e-11
 
 /**
  * A point or direction in the unknowns with, for each, the size of the largest numbers that it was made of: a value far

@@ -4,13 +4,11 @@ import { combine, constantForm, type LinearForm, type Measure } from '../measure
 import { typedValue } from '../measure/typed-value'
 import type { Model } from '../model'
 import type { Given } from '../problem'
-import { seededRandom } from '../random'
 import { fixedRuleValue } from '../rows/assemble'
 import { CellFlag, CellState, type Solution } from '../solution'
-import { applyInverse } from '../sparse/solve'
 import { forEachCell } from './cells'
 import type { CellArrays } from './fill-cells'
-import { evaluate } from './knowledge'
+import { randomChanges } from './random-change'
 
 /** Relative change of a cell per relative change of its worst given from which it is flagged. */
 export const AMPLIFIED = 1e4
@@ -29,7 +27,7 @@ const MOST_WORK = 1e7
 export function findAmplified(model: Model, settled: Settled, cells: CellArrays): Solution['amplification'] {
   const { resolved, assembly } = settled
   const { elimination: e, generic } = resolved.knowledge
-  const changes = [1, 2].map((seed) => applyInverse(e, randomChange(settled, seed)))
+  const changes = randomChanges(assembly, resolved.knowledge, resolved.blur)
   const tracer = new Tracer(model, assembly, resolved)
   const found: Solution['amplification'] = []
   let work = 0
@@ -67,29 +65,6 @@ function dot(form: LinearForm, x: Float64Array): number {
 
 const sensitive = ({ numerator, denominator }: Measure, value: number) =>
   denominator ? combine(1, numerator, -value, denominator) : combine(1, numerator, 0, constantForm(0))
-
-/** Right-hand sides for a change of every typed value, and of every row turned linear, by all of itself with a random sign. */
-function randomChange({ resolved, assembly }: Settled, seed: number): Float64Array {
-  const { elimination: e, generic } = resolved.knowledge
-  const random = seededRandom(seed)
-  return Float64Array.from({ length: e.rows.nRows }, (_, i) => {
-    const row = e.rows.stored[i] as number
-    const typed = assembly.rows.typed[row]
-    const sign = random() < 0.5 ? -1 : 1
-    if (typed) {
-      const { denominator } = typed.measure
-      return sign * typed.value * (denominator ? evaluate(denominator, generic).value : 1)
-    }
-    if (!resolved.restsOn.has(row)) return 0
-    let most = 0
-    for (let k = e.rows.start[i] as number; k < (e.rows.start[i + 1] as number); k++)
-      most = Math.max(
-        most,
-        Math.abs((e.rows.value[k] as number) * (generic.value[e.rows.column[k] as number] as number)),
-      )
-    return sign * most
-  })
-}
 
 function worstGiven(
   model: Model,

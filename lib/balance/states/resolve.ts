@@ -8,6 +8,7 @@ import { compileRows } from '../sparse/compiled-rows'
 import { eliminate } from '../sparse/elimination'
 import { gatherKnowledge } from './knowledge'
 import { openRows } from './open-rows'
+import { type Blur, blurOf, randomChanges } from './random-change'
 import type { Resolved, Round } from './resolved'
 import { zeroSums } from './zero-sums'
 
@@ -25,6 +26,7 @@ export function resolve(model: Model, assembly: Assembly, evenOpen = false): Res
   const { rows, nonNegative } = assembly
   const rounds: Round[] = []
   const restsOn = new Map<number, TurnedRow['restsOn']>()
+  const blur: Blur = new Map()
   const fixedAtZero = new Set<number>()
   const freeWhenTurned = new Map<Pending, number>()
   const isOpen = (sofar: Resolved): boolean => {
@@ -38,12 +40,16 @@ export function resolve(model: Model, assembly: Assembly, evenOpen = false): Res
   for (let round = 0; ; round++) {
     const knowledge = gatherKnowledge(eliminate(compileRows(rows, model.nColumns), nonNegative))
     const firstRow = rows.count
+    let changes: Float64Array[] | undefined
     const push = (source: number, { form, restsOn: forms }: TurnedRow): void => {
       if (form.columns.length === 0 && form.constant === 0) return
-      restsOn.set(rows.push(source, form.columns, form.coefficients, 0 - form.constant), forms)
+      const row = rows.push(source, form.columns, form.coefficients, 0 - form.constant)
+      changes ??= randomChanges(assembly, knowledge, blur)
+      restsOn.set(row, forms)
+      blur.set(row, blurOf(forms, knowledge, changes))
     }
     // From rows that contradict each other nothing follows: what is at odds has to be settled first.
-    if (round < MOST_ROUNDS && (evenOpen || !isOpen({ knowledge, left, rounds, restsOn }))) {
+    if (round < MOST_ROUNDS && (evenOpen || !isOpen({ knowledge, left, rounds, restsOn, blur }))) {
       left = left.filter((item) => {
         if (item.kind === 'composition') {
           const { length } = knowledge.elimination.free
@@ -64,7 +70,7 @@ export function resolve(model: Model, assembly: Assembly, evenOpen = false): Res
           push(zero, { form: { columns: [column], coefficients: [1], constant: 0 }, restsOn: [sum] })
         }
     }
-    if (rows.count === firstRow) return { knowledge, left, rounds, restsOn }
+    if (rows.count === firstRow) return { knowledge, left, rounds, restsOn, blur }
     rounds.push({ knowledge, firstRow })
   }
 }

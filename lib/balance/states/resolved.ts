@@ -1,6 +1,7 @@
 import type { Pending } from '../pending/pending'
 import type { TurnedRow } from '../pending/turned-row'
 import type { Knowledge } from './knowledge'
+import type { Blur } from './random-change'
 
 /** Rows that were added in one round, with the knowledge that they rest on. */
 export type Round = { knowledge: Knowledge; firstRow: number }
@@ -13,4 +14,6 @@ export type Resolved = {
   rounds: Round[]
   /** Store row -> forms that an added row rests on. */
   restsOn: Map<number, TurnedRow['restsOn']>
+  /** How blurred each added row is by what it rests on. */
+  blur: Blur
 }
