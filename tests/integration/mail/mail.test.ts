@@ -33,16 +33,19 @@ describe('a queued mail', () => {
   it('goes out over SMTP once its transaction has committed, and leaves no secret behind', async () => {
     const standIn = await room.openStandIn()
     open.push(standIn)
+    // Mails that other tests left in the queue go out by this worker too.
+    const to = 'smtp.once@example.com'
+    const place = () => standIn.mails().findIndex((mail) => mail.to.includes(to))
     await work(room.post({ url: standIn.url }))
     const id = await db.transaction(async (tx) => {
-      const queued = await enqueueMail(tx, { to: 'ada@example.com', message: room.reset, teamId: null })
+      const queued = await enqueueMail(tx, { to, message: room.reset, teamId: null })
       await wait(1500) // the worker looks more than once meanwhile
-      expect(standIn.mails()).toEqual([])
+      expect(place()).toBe(-1)
       return queued
     })
     const row = await room.untilState(id, 'sent')
     expect(row).toMatchObject({
-      to: 'ada@example.com',
+      to,
       kind: 'resetPassword',
       attempts: 1,
       sealed: null,
@@ -50,17 +53,17 @@ describe('a queued mail', () => {
     })
     expect(row.sentAt).toBeInstanceOf(Date)
 
-    const [mail] = standIn.mails()
+    const mail = standIn.mails()[place()]
     expect(mail).toMatchObject({
       from: 'no-reply@tallybrook.example',
-      to: ['ada@example.com'],
+      to: [to],
       subject: 'Choose a new password',
       messageId: row.messageId,
     })
     expect(mail?.text).toContain(`http://127.0.0.1:3000/reset?token=${room.secretToken}\n`)
     expect(mail?.html).toContain(`href="http://127.0.0.1:3000/reset?token=${room.secretToken}"`)
-    expect(standIn.raw()[0]).toMatch(/^Auto-Submitted: auto-generated\r$/im)
-    expect(standIn.raw()[0]).toContain('multipart/alternative')
+    expect(standIn.raw()[place()]).toMatch(/^Auto-Submitted: auto-generated\r$/im)
+    expect(standIn.raw()[place()]).toContain('multipart/alternative')
   })
 
   it('is not there where its transaction was rolled back', async () => {
