@@ -1,6 +1,6 @@
 import { setTimeout as wait } from 'node:timers/promises'
 import { eq, sql } from 'drizzle-orm'
-import { afterEach, describe, expect, inject, it } from 'vitest'
+import { afterEach, beforeAll, describe, expect, inject, it } from 'vitest'
 import { db } from '@/db/client'
 import { mailDelivery } from '@/db/schema/mail'
 import { listDeliveries } from '@/lib/data/mail/list-deliveries'
@@ -13,12 +13,17 @@ import { prepareQueues } from '@/lib/queue/prepare-queues'
 import { makeTeam, value } from '../world'
 import * as room from './mail-room'
 
-const open: { close: () => Promise<unknown> }[] = []
-afterEach(async () => {
-  for (const one of open.splice(0).reverse()) await one.close()
-  // What a test left waiting is not the next one's.
+/** What a test, here or in another file, left waiting is not the next one's. */
+async function emptyQueue(): Promise<void> {
   await db.execute(sql`delete from pgboss.job where name = 'deliver-mail'`)
   await db.delete(mailDelivery)
+}
+
+const open: { close: () => Promise<unknown> }[] = []
+beforeAll(emptyQueue)
+afterEach(async () => {
+  for (const one of open.splice(0).reverse()) await one.close()
+  await emptyQueue()
 })
 
 async function work(way: ReturnType<typeof room.post>): Promise<Worker> {
@@ -33,7 +38,6 @@ describe('a queued mail', () => {
   it('goes out over SMTP once its transaction has committed, and leaves no secret behind', async () => {
     const standIn = await room.openStandIn()
     open.push(standIn)
-    // Mails that other tests left in the queue go out by this worker too.
     const to = 'smtp.once@example.com'
     const place = () => standIn.mails().findIndex((mail) => mail.to.includes(to))
     await work(room.post({ url: standIn.url }))
