@@ -1,4 +1,5 @@
 import type { Member } from '../rows/members'
+import { smallRank } from '../sparse/small-rank'
 import { type Circuit, combineCircuits } from './circuit'
 
 /** At most this many sets are listed. */
@@ -112,30 +113,9 @@ function isElementary(circuit: Circuit, basis: readonly Circuit[]): boolean {
 }
 
 function denseRank(rows: number[][]): number {
-  let rank = 0
-  const left = rows.map((row) => {
+  const scaled = rows.map((row) => {
     const size = Math.max(...row.map(Math.abs))
     return row.map((value) => value / size)
   })
-  for (;;) {
-    let best: [number, number] | undefined
-    let size = 1e-9
-    left.forEach((row, i) => {
-      row.forEach((value, j) => {
-        if (Math.abs(value) > size) {
-          size = Math.abs(value)
-          best = [i, j]
-        }
-      })
-    })
-    if (!best) return rank
-    rank++
-    const [i, j] = best
-    const [pivot] = left.splice(i, 1) as [number[]]
-    for (const row of left) {
-      const factor = (row[j] as number) / (pivot[j] as number)
-      for (let k = 0; k < row.length; k++) row[k]! -= factor * (pivot[k] as number)
-      row[j] = 0
-    }
-  }
+  return smallRank(scaled, 1e-9)
 }

@@ -4,6 +4,7 @@ import type { Composition } from '../pending/composition'
 import type { Pending } from '../pending/pending'
 import { poolPart, poolTotal } from '../pending/pool'
 import { seededRandom } from '../random'
+import { smallRank } from '../sparse/small-rank'
 import { directionOf } from '../sparse/solve'
 import type { Knowledge } from './knowledge'
 
@@ -143,30 +144,10 @@ function flows(model: Model, left: readonly Pending[], x: Float64Array, scale: n
 }
 
 function rankOf(rows: number[][]): number {
-  const left = rows.map((row) => {
+  const scaled = rows.map((row) => {
     const size = Math.sqrt(dot(row, row))
     // An equation that the linear rows imply has no gradient but rounding.
     return size < INDEPENDENT ? row.map(() => 0) : row.map((value) => value / size)
   })
-  let rank = 0
-  for (;;) {
-    let best: [number, number] | undefined
-    let size = INDEPENDENT
-    left.forEach((row, i) => {
-      row.forEach((value, j) => {
-        if (Math.abs(value) > size) {
-          size = Math.abs(value)
-          best = [i, j]
-        }
-      })
-    })
-    if (!best) return rank
-    rank++
-    const [i, j] = best
-    const [pivot] = left.splice(i, 1) as [number[]]
-    for (const row of left) {
-      const factor = (row[j] as number) / (pivot[j] as number)
-      for (let k = 0; k < row.length; k++) row[k]! -= factor * (pivot[k] as number)
-    }
-  }
+  return smallRank(scaled, INDEPENDENT)
 }
