@@ -46,6 +46,8 @@ export type CellView = {
   bold?: boolean
   /** A wrong entry, a doubtful value, or a broken connection. */
   mark?: 'wrong' | 'flag' | 'broken'
+  /** A value stands here that is not used. */
+  kept?: 'check' | 'withdrawn' | 'difference'
   /** Why it is marked. */
   description?: string
 }

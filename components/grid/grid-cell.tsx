@@ -35,6 +35,7 @@ export type GridCellProps = {
   tone: CellTone
   bold?: boolean | undefined
   mark?: 'wrong' | 'flag' | 'broken' | undefined
+  kept?: 'check' | 'withdrawn' | 'difference' | undefined
   description?: string | undefined
   selected: boolean
   tabStop: boolean
@@ -84,6 +85,7 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
       }}
     >
       {tone === 'unknown' || tone === 'absent' ? <span className="cell-mark">{text}</span> : text}
+      {props.kept ? <span className={classNames('grid-kept', `cell-kept-${props.kept}`)} aria-hidden="true" /> : null}
       {props.aside ? <small>{props.aside}</small> : null}
     </div>
   )

@@ -59,6 +59,7 @@ export const GridRowView = memo(function GridRowView(props: GridRowProps) {
         tone={view.tone}
         bold={view.bold}
         mark={view.mark}
+        kept={view.kept}
         description={view.description}
         selected={index >= props.selectedFrom && index <= props.selectedTo}
         tabStop={index === tabStop}

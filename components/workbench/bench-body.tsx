@@ -14,6 +14,7 @@ import type { BookView } from './book-view'
 import { CellCard } from './card/cell-card'
 import type { Desk } from './desk'
 import { NotesPanel, noteLines } from './notes-panel'
+import { OddsPanel } from './odds/odds-panel'
 import { Legend, type PanelKey, PanelTabs } from './panel-tabs'
 import { RulesPanel } from './rules/rules-panel'
 import { useNarrow } from './use-reader'
@@ -77,6 +78,8 @@ export function BenchBody(props: BenchBodyProps) {
                     counts={{
                       connections: view.plant.length,
                       rules: view.state.rule.size + view.state.reaction.size,
+                      odds: view.solved?.solution.conflicts.length ?? 0,
+                      checks: 0,
                       notes: noteLines(view).length,
                     }}
                     onChoose={props.onPanel}
@@ -100,6 +103,7 @@ export function BenchBody(props: BenchBodyProps) {
                     className={panel === 'connections' ? 'min-h-0 flex-1' : 'min-h-0 flex-1 overflow-y-auto'}
                   >
                     {panel === 'rules' ? <RulesPanel view={view} desk={desk} /> : null}
+                    {panel === 'odds' ? <OddsPanel view={view} desk={desk} /> : null}
                     {panel === 'notes' ? <NotesPanel view={view} onStream={props.onStream} /> : null}
                     {panel === 'connections' && view.plant.length > 0 ? (
                       <GridPane

@@ -8,16 +8,7 @@ import { formatNumber } from '@/lib/sheet/format'
 import { type BookView, cellKey, isFraction, rowUnit } from './book-view'
 import type { RowQuantity } from './rows'
 
-export type ReadState =
-  | 'given'
-  | 'solvable'
-  | 'unknown'
-  | 'atOdds'
-  | 'absent'
-  | 'check'
-  | 'withdrawn'
-  | 'wrong'
-  | 'missing'
+export type ReadState = 'given' | 'solvable' | 'unknown' | 'atOdds' | 'absent' | 'wrong' | 'missing'
 
 /** What one cell of the stream table holds, before it is put into words. */
 export type Reading = {
@@ -26,6 +17,8 @@ export type Reading = {
   value: number | null
   /** The given that stands here, if any, also one that is not used. */
   given: RecordOf<'given'> | null
+  /** Why the given that stands here is not used: kept as a check, withdrawn, or its component is by difference. */
+  kept: 'check' | 'withdrawn' | 'difference' | null
   /** Further readings of the same measure. */
   others: readonly RecordOf<'given'>[]
   flags: number
@@ -62,7 +55,8 @@ export function readCell(
   const list = view.givensAt.get(cellKey(streamId, quantity, componentId)) ?? []
   const given = list[0] ?? null
   const others = list.slice(1)
-  const nothing: Reading = { state: 'unknown', value: null, given, others, flags: 0, slot: null, reason: null }
+  const kept = given && given.use !== 'given' ? given.use : null
+  const nothing: Reading = { state: 'unknown', value: null, given, kept, others, flags: 0, slot: null, reason: null }
   if (componentId !== null && state.absence.has(absenceId(streamId, componentId)))
     return { ...nothing, state: 'absent', reason: given ? (view.leftOut.get(given.id) ?? null) : null }
   if (quantity === 'volumeFlow') return readVolume(view, streamId, nothing)
@@ -80,8 +74,12 @@ export function readCell(
     return { ...nothing, state: 'wrong', flags, slot, reason: reasonOf(view, quantity, given) }
   if (given && given.use === 'given') {
     const typed = inRow(view, quantity, given)
+    if (!isTaken(found) && isByDifference(view, streamId, quantity, componentId)) {
+      const here = found === CellState.solvable ? { state: 'solvable' as const, value: computed, flags } : {}
+      return { ...nothing, ...here, kept: 'difference', slot }
+    }
     const refused = view.leftOut.get(given.id)
-    if (refused !== undefined && !isStaleRefusal(found))
+    if (refused !== undefined && !isTaken(found))
       return { ...nothing, state: 'wrong', value: typed?.value ?? null, flags, slot, reason: refused }
     return {
       ...nothing,
@@ -91,14 +89,24 @@ export function readCell(
       slot,
     }
   }
-  const kept = given ? (given.use === 'check' ? 'check' : 'withdrawn') : null
   // An answer that is a moment old may still call a cleared cell given: it is unknown until the next one comes.
   if (found === CellState.solvable || (found === CellState.given && others.some(({ use }) => use === 'given')))
-    return { ...nothing, state: kept ?? 'solvable', value: computed, flags, slot }
+    return { ...nothing, state: 'solvable', value: computed, flags, slot }
   if (found === CellState.atOdds) return { ...nothing, state: 'atOdds', value: computed, flags, slot }
   if (found === CellState.absent && quantity.startsWith('other'))
     return { ...nothing, state: 'missing', slot, reason: 'A molar mass is missing' }
-  return { ...nothing, state: kept ?? 'unknown', slot }
+  return { ...nothing, state: 'unknown', slot }
+}
+
+/** A typed fraction that the person lets follow from the others. */
+function isByDifference(
+  view: BookView,
+  streamId: StreamId,
+  quantity: RowQuantity,
+  componentId: string | null,
+): boolean {
+  const stream = view.state.stream.get(streamId)
+  return isFraction(quantity) && stream?.fractions === 'difference' && stream.differenceComponentId === componentId
 }
 
 /** A volume flow: typed, or mass over density where both are known. It is no cell of the solver's arrays. */
@@ -116,8 +124,8 @@ function readVolume(view: BookView, streamId: StreamId, nothing: Reading): Readi
   return kilograms === null ? nothing : { ...nothing, state: 'solvable', value: kilograms / density, flags: mass.flags }
 }
 
-/** A given that the newest answer counts as given was taken, whatever an older list says. */
-const isStaleRefusal = (found: CellState): boolean => found === CellState.given || found === CellState.atOdds
+/** The newest answer counts the given of this cell as given, so it was taken, whatever an older list says. */
+const isTaken = (found: CellState): boolean => found === CellState.given || found === CellState.atOdds
 
 function reasonOf(view: BookView, quantity: RowQuantity, given: RecordOf<'given'>): string {
   const entry = readEntry(given.text, {
@@ -141,14 +149,26 @@ export function shownNumber(view: BookView, quantity: RowQuantity, reading: Read
   return formatNumber(reading.value, style, { decimal, digits, extraDigits })
 }
 
+/** What was typed, as the row prints it, also where it is not used; null where it is no number. */
+export function typedNumber(view: BookView, quantity: RowQuantity, given: RecordOf<'given'>): string | null {
+  const typed = inRow(view, quantity, given)
+  if (!typed) return null
+  const style = isFraction(quantity) ? 'percent' : 'flow'
+  return formatNumber(typed.value, style, { decimal: view.decimal, typed: true, halfWidth: typed.halfWidth })
+}
+
+export const keptWords: Record<NonNullable<Reading['kept']>, string> = {
+  check: 'check only',
+  withdrawn: 'withdrawn',
+  difference: 'by difference',
+}
+
 export const stateWords: Record<ReadState, string> = {
   given: 'given',
   solvable: 'solvable now',
   unknown: 'still unknown',
   atOdds: 'at odds',
   absent: 'absent',
-  check: 'check only',
-  withdrawn: 'withdrawn',
   wrong: 'not understood',
   missing: 'not available',
 }

@@ -12,6 +12,8 @@ type CommitInputProps = {
   placeholder?: string
   className?: string
   inputMode?: ComponentProps<'input'>['inputMode']
+  /** For a field that a press on a button has just opened. */
+  autoFocus?: boolean
   /** Takes what was typed; a sentence when it cannot be taken, and then it stays in the field. */
   onCommit: (text: string) => string | null
 }

@@ -2,6 +2,7 @@ import type { GridPlace } from '@/hooks/grid-model'
 import type { Change } from '@/lib/book/change'
 import { isEmptyChange } from '@/lib/book/change'
 import type { Edit } from '@/lib/book/edits/draft'
+import type { PanelKey } from './panel-tabs'
 
 /** A question that hangs on a cell: what stands in the way, and the ways out. */
 export type Offer = {
@@ -21,6 +22,8 @@ export type Desk = {
   offer: (offer: Offer) => void
   openMenu: (menu: { pane: 'table' | 'links'; place: GridPlace; at: { x: number; y: number } }) => void
   openDialog: (dialog: DialogRequest) => void
+  /** Opens a panel under the stream table and brings the focus there. */
+  openPanel: (panel: PanelKey) => void
   /** Brings the cursor of a pane to a place. */
   show: (pane: 'table' | 'links', place: GridPlace) => void
 }

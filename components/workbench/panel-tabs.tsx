@@ -2,7 +2,7 @@
 
 import type { KeyboardEvent, ReactNode } from 'react'
 
-export type PanelKey = 'connections' | 'rules' | 'notes'
+export type PanelKey = 'connections' | 'rules' | 'odds' | 'checks' | 'notes'
 
 type PanelTabsProps = {
   chosen: PanelKey
@@ -14,6 +14,8 @@ type PanelTabsProps = {
 const titles: [PanelKey, string][] = [
   ['connections', 'Connections'],
   ['rules', 'Rules'],
+  ['odds', 'At odds'],
+  ['checks', 'Checks'],
   ['notes', 'Notes'],
 ]
 
@@ -31,7 +33,11 @@ export function PanelTabs({ chosen, counts, onChoose, children }: PanelTabsProps
   }
   return (
     <div className="flex h-9.5 flex-none items-center border-b border-hair bg-rail ps-2 pe-3">
-      <div role="tablist" aria-label="Under the stream table" className="flex h-full">
+      <div
+        role="tablist"
+        aria-label="Under the stream table"
+        className="flex h-full min-w-0 overflow-x-auto [scrollbar-width:none]"
+      >
         {titles.map(([key, title]) => (
           <button
             key={key}
@@ -41,13 +47,17 @@ export function PanelTabs({ chosen, counts, onChoose, children }: PanelTabsProps
             aria-selected={key === chosen}
             aria-controls={`panel-${key}`}
             tabIndex={key === chosen ? 0 : -1}
-            className="px-3 text-sm text-ink-2 aria-selected:font-semibold aria-selected:text-ink aria-selected:shadow-[inset_0_-2px_0_var(--brook)]"
+            className="flex-none px-3 text-sm whitespace-nowrap text-ink-2 max-sm:px-2.5 aria-selected:font-semibold aria-selected:text-ink aria-selected:shadow-[inset_0_-2px_0_var(--brook)]"
             onClick={() => onChoose(key)}
             onKeyDown={onKeyDown}
           >
             {title}
             {counts[key] > 0 && key !== 'connections' ? (
-              <span className="ms-1.5 rounded-full bg-hair px-1.5 text-2xs text-ink-2">{counts[key]}</span>
+              <span
+                className={`ms-1.5 rounded-full px-1.5 text-2xs ${key === 'odds' ? 'bg-odds text-odds-ink' : 'bg-hair text-ink-2'}`}
+              >
+                {counts[key]}
+              </span>
             ) : null}
           </button>
         ))}

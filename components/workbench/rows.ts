@@ -30,6 +30,14 @@ export function readRow(id: string): RowRef | null {
   return field ? { kind: 'field', field } : null
 }
 
+/** The section that a row of values stands in, so that it can be opened to show the row; null: one that always stands. */
+export function sectionOf(row: string): SectionKey | null {
+  const ref = readRow(row)
+  if (ref?.kind !== 'value' || ref.quantity === 'flow') return null
+  if (ref.quantity === 'otherFlow') return 'otherComponentFlow'
+  return ref.quantity === 'volumeFlow' ? 'carried' : ref.quantity
+}
+
 type Given = RecordOf<'given'>
 export type Quantity = Given['quantity']
 type Basis = RecordOf<'book'>['basis']

@@ -25,7 +25,7 @@ export function stripWords(view: BookView): StripWords {
       ? [...clash.givens.map((place) => placeWords(view, place)), ...clash.relations.map(({ id }) => `rule ${id}`)]
       : []
     const which = members.length > 0 ? `${listed(members, 6)} cannot all hold.` : 'Some givens cannot all hold.'
-    return say(sentence(which), 'Correct one, withdraw it, or keep it as a check only: open its cell to choose.', true)
+    return say(sentence(which), 'Correct one, withdraw it, or keep it as a check only.', true)
   }
   const follow = `${counted(solvable, 'cell')} ${verb(solvable, 'follows', 'follow')}`
   const from = `from ${given} given.`

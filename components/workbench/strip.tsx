@@ -3,12 +3,13 @@
 import { useEffect, useState } from 'react'
 import { classNames } from '@/components/ui/class-names'
 import type { BookView } from './book-view'
+import type { PanelKey } from './panel-tabs'
 import { stripWords } from './strip-words'
 
-type StripProps = { view: BookView; stale: boolean; trouble: string | null; onNotes: () => void }
+type StripProps = { view: BookView; stale: boolean; trouble: string | null; onPanel: (panel: PanelKey) => void }
 
 /** How far the table is, at all times: one sentence, and the shares of the states under it. */
-export function Strip({ view, stale, trouble, onNotes }: StripProps) {
+export function Strip({ view, stale, trouble, onPanel }: StripProps) {
   const slow = useSlow(stale)
   const words = stripWords(view)
   const summary = view.solved?.solution.summary
@@ -24,10 +25,18 @@ export function Strip({ view, stale, trouble, onNotes }: StripProps) {
     <section className="sheet relative overflow-hidden px-4 pt-2.5 pb-4 max-sm:px-3" aria-label="How far the table is">
       <p className={classNames('max-sm:text-sm', words.trouble && 'text-odds-ink')}>
         <strong className="font-semibold">{words.lead}</strong> {words.rest}
+        {summary && (summary.atOdds > 0 || view.solved?.solution.status === 'atOdds') ? (
+          <>
+            {' '}
+            <button type="button" className="link" onClick={() => onPanel('odds')}>
+              See what is at odds
+            </button>
+          </>
+        ) : null}
         {leftOut > 0 ? (
           <>
             {' '}
-            <button type="button" className="link" onClick={onNotes}>
+            <button type="button" className="link" onClick={() => onPanel('notes')}>
               {leftOut === 1 ? '1 entry is not used' : `${leftOut} entries are not used`}
             </button>
           </>

@@ -4,7 +4,17 @@ import { CellState } from '@/lib/balance/solution'
 import { linkId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 import { type BookView, rowUnit } from './book-view'
-import { flagWords, isDoubtful, type ReadState, readCell, shownNumber, stateWords } from './cell-reading'
+import {
+  flagWords,
+  isDoubtful,
+  keptWords,
+  type ReadState,
+  readCell,
+  shownNumber,
+  stateWords,
+  typedNumber,
+} from './cell-reading'
+import { fractionChoice } from './odds/fraction-choice'
 import {
   fieldTitle,
   type RowQuantity,
@@ -125,9 +135,11 @@ function fieldCell(view: BookView, field: StreamField, stream: RecordOf<'stream'
   if (field === 'tag') {
     const troubles = (view.streamTroubles.get(stream.id) ?? []).filter(({ severity }) => severity !== 'note')
     const said = troubles.map(({ text }) => text).join(' ')
+    const choice = fractionChoice(view, stream)
     return {
       text: stream.tag,
-      label: `Stream ${stream.tag}${stream.name ? `, ${stream.name}` : ''}`,
+      label: `Stream ${stream.tag}${stream.name ? `, ${stream.name}` : ''}${choice ? `; ${choice.words}` : ''}`,
+      ...(choice ? { aside: choice.mark } : {}),
       tone: 'tag',
       ...(said === '' ? {} : { mark: 'broken' as const, description: said }),
     }
@@ -143,8 +155,6 @@ const toneOf: Record<ReadState, CellTone> = {
   unknown: 'unknown',
   atOdds: 'atOdds',
   absent: 'absent',
-  check: 'solvable',
-  withdrawn: 'unknown',
   wrong: 'plain',
   missing: 'absent',
 }
@@ -170,11 +180,18 @@ function valueCell(
   const number = shownNumber(view, quantity, reading)
   const words = flagWords(reading.flags)
   const text = number !== '' ? number : reading.state === 'absent' ? '–' : reading.state === 'missing' ? '' : '·'
-  const description = [reading.reason ?? '', ...words].filter(Boolean).join(' ')
+  const typed = reading.given && reading.kept ? typedNumber(view, quantity, reading.given) : null
+  // A value that stands but is not used is told after the one that holds.
+  const aside = reading.kept
+    ? `; typed ${typed === null ? `“${reading.given?.text}”` : `${typed} ${shown}`}, ${keptWords[reading.kept]}`
+    : ''
+  const keptHint = aside === '' ? '' : `Not used: ${aside.slice(2)}.`
+  const description = [reading.reason ?? '', keptHint, ...words].filter(Boolean).join(' ')
   return {
     text,
-    label: number === '' ? `${where}: ${state}` : `${where}: ${number} ${shown}, ${state}`,
-    tone: number === '' && reading.state === 'check' ? 'unknown' : toneOf[reading.state],
+    label: `${number === '' ? `${where}: ${state}` : `${where}: ${number} ${shown}, ${state}`}${aside}`,
+    tone: toneOf[reading.state],
+    ...(reading.kept === null ? {} : { kept: reading.kept }),
     bold: quantity === 'flow',
     ...(isDoubtful(reading.flags) || (reading.state === 'absent' && reading.given) ? { mark: 'flag' as const } : {}),
     ...(description === '' ? {} : { description }),

@@ -14,3 +14,6 @@ export function placeWords(view: BookView, place: Place): string {
 
 /** With a capital first letter, to begin a sentence. */
 export const sentence = (text: string): string => `${text[0]?.toUpperCase() ?? ''}${text.slice(1)}`
+
+/** To stand inside a sentence. */
+export const lowered = (text: string): string => `${text[0]?.toLowerCase() ?? ''}${text.slice(1)}`

@@ -20,7 +20,7 @@ import { OfferNote } from './offer-note'
 import type { PanelKey } from './panel-tabs'
 import { PlaceMenu } from './place-menu'
 import { backToCell, goToNextRegion } from './regions'
-import { type SectionKey, valueRow } from './rows'
+import { type SectionKey, sectionOf, valueRow } from './rows'
 import { SaveTrouble } from './save-state'
 import { Strip } from './strip'
 import { tableRows } from './table-cells'
@@ -77,7 +77,15 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
       offer: setOffer,
       openMenu: setMenu,
       openDialog: setDialog,
-      show: (inPane, place) => setWanted({ pane: inPane, place }),
+      openPanel: (key) => {
+        setPanel(key)
+        setTimeout(() => document.getElementById(`tab-${key}`)?.focus(), 0)
+      },
+      show: (inPane, place) => {
+        const section = sectionOf(place.row)
+        if (section) setOpen((was) => (was.has(section) ? was : new Set([...was, section])))
+        setWanted({ pane: inPane, place })
+      },
     }
   }, [book.edit])
 
@@ -158,7 +166,7 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
         view={view}
         stale={solver.stale && solver.solved !== null}
         trouble={solver.trouble}
-        onNotes={() => setPanel('notes')}
+        onPanel={desk.openPanel}
       />
       <BenchBody
         view={view}

@@ -31,8 +31,6 @@ const tones: Record<ReadState, TagTone> = {
   unknown: 'unknown',
   atOdds: 'atOdds',
   absent: 'absent',
-  check: 'quiet',
-  withdrawn: 'quiet',
   wrong: 'atOdds',
   missing: 'absent',
 }

@@ -1,12 +1,12 @@
 'use client'
 
-import type { Conflict } from '@/lib/balance/solution'
 import type { RecordOf } from '@/lib/book/kinds'
-import { bookUnitOf, convert } from '@/lib/book/units'
-import { formatNumber } from '@/lib/sheet/format'
-import { type BookView, isFraction, rowUnit } from '../book-view'
-import { type RowQuantity, rowQuantityOf } from '../rows'
-import { placeWords, sentence } from '../words'
+import type { BookView } from '../book-view'
+import type { Desk } from '../desk'
+import { MemberWays } from '../odds/member-ways'
+import { type OddsMember, oddsOf } from '../odds/odds-sets'
+import { backToCell } from '../regions'
+import { type RowQuantity, valueRow } from '../rows'
 import { CardSection } from './card-parts'
 
 /** More at once cannot be read; settling one usually settles others. */
@@ -14,67 +14,79 @@ const SHOWN = 2
 
 type ConflictListProps = {
   view: BookView
+  desk: Desk
   stream: RecordOf<'stream'>
   quantity: RowQuantity
-  component: RecordOf<'component'> | undefined
+  componentId: string | null
 }
 
-/** The clashes that a cell takes part in, with what the others imply and by how much it differs. */
-export function ConflictList({ view, stream, quantity, component }: ConflictListProps) {
-  const conflicts = (view.solved?.solution.conflicts ?? []).filter((conflict) =>
-    conflict.givens.some(
-      (place) =>
-        place.stream === stream.tag.trim() &&
-        rowQuantityOf(place.quantity, view.book.basis) === quantity &&
-        place.component === component?.tag.trim(),
-    ),
-  )
-  if (conflicts.length === 0) return null
+/** The clashes that a cell takes part in: what the others imply, by how much, and the ways out for each member. */
+export function ConflictList({ view, desk, stream, quantity, componentId }: ConflictListProps) {
+  const odds = oddsOf(view)
+  const row = valueRow(quantity, componentId)
+  const isHere = ({ place }: OddsMember) => place?.row === row && place.column === stream.id
+  const sets = odds.sets.filter(({ members }) => members.some(isHere))
+  const own = sets[0]?.members.filter(isHere) ?? []
+  if (own.length === 0) return null
+  const done = () => backToCell('table')
   return (
     <CardSection title="At odds">
-      {conflicts.slice(0, SHOWN).map((conflict) => (
-        <div key={conflictKey(conflict)} className="mb-2 border-s-3 border-odds-edge ps-2.5 text-sm">
-          <p>{where(conflict)}</p>
-          <ul className="mt-1 grid gap-1">
-            {conflict.givens.map((place) => (
-              <li key={`${place.stream}/${place.quantity}/${place.component ?? ''}/${place.instrument ?? ''}`}>
-                {sentence(placeWords(view, place))}: {numbers(view, place)}
-              </li>
-            ))}
-            {conflict.relations.map((rule) => (
-              <li key={rule.id}>Rule {rule.id}</li>
-            ))}
-          </ul>
+      {own.map((member) => (
+        <div key={member.key} className="mb-2 grid gap-1.5 text-sm">
+          <p>
+            {numbers(member)} {settling(member, odds.sets.length, odds.truncated)}
+          </p>
+          <MemberWays view={view} desk={desk} member={member} onDone={done} />
         </div>
       ))}
-      {conflicts.length > SHOWN ? (
-        <p className="mb-1 text-sm">It takes part in {conflicts.length - SHOWN} more such sets.</p>
+      {sets.slice(0, SHOWN).map((set) => (
+        <section
+          key={set.number}
+          aria-label={`Conflict ${set.number}`}
+          className="mb-2 border-s-3 border-odds-edge ps-2.5 text-sm"
+        >
+          <p>
+            <strong className="font-semibold">Conflict {set.number}.</strong> {set.where}. The others in it:
+          </p>
+          <ul className="mt-1 grid gap-1.5">
+            {set.members
+              .filter((member) => !isHere(member))
+              .map((member) => (
+                <li key={member.key}>
+                  <MemberName desk={desk} member={member} />: {numbers(member)}
+                </li>
+              ))}
+          </ul>
+        </section>
+      ))}
+      {sets.length > SHOWN ? (
+        <p className="mb-1 text-sm">It takes part in {sets.length - SHOWN} more such sets.</p>
       ) : null}
-      <p className="text-sm text-ink-2">Correct one, withdraw it, or keep it as a check only: under “Use” below.</p>
+      <button type="button" className="link text-sm" onClick={() => desk.openPanel('odds')}>
+        All that is at odds, with the ways out
+      </button>
     </CardSection>
   )
 }
 
-const conflictKey = (conflict: Conflict): string =>
-  JSON.stringify([
-    conflict.code,
-    conflict.boundary,
-    conflict.givens.map(({ stream, quantity, component }) => [stream, quantity, component]),
-  ])
-
-function where({ boundary, stream }: Conflict): string {
-  if (boundary.length > 0) return `These cannot all hold round ${boundary.join(', ')}:`
-  return stream ? `These cannot all hold in stream ${stream}:` : 'These cannot all hold:'
+/** Leads to the cell of the member; a rule has none. */
+export function MemberName({ desk, member }: { desk: Desk; member: OddsMember }) {
+  const { place, name } = member
+  if (!place) return <>{name}</>
+  return (
+    <button type="button" className="link text-start" onClick={() => desk.show('table', place)}>
+      {name}
+    </button>
+  )
 }
 
-/** "typed 24.00, the others imply 23.10 wt %". */
-function numbers(view: BookView, place: Conflict['givens'][number]): string {
-  const { basis, flowUnit } = view.book
-  const cell = rowQuantityOf(place.quantity, basis)
-  const from = bookUnitOf(place.quantity, basis, flowUnit) ?? ''
-  const { symbol, shown } = rowUnit(view, cell)
-  const style = isFraction(cell) ? 'percent' : 'flow'
-  const say = (value: number, extraDigits = 0) =>
-    formatNumber(convert(value, from, symbol) ?? value, style, { decimal: view.decimal, extraDigits })
-  return `typed ${say(place.typed)}, the others imply ${say(place.implied, 1)} ${shown}`
+/** "typed 24.00, the others imply 24.560 wt %: off by −0.560." */
+function numbers({ typed, implied, by, unit }: OddsMember): string {
+  if (typed === null || implied === null) return `off by ${by}.`
+  return `typed ${typed}, the others imply ${implied} ${unit}: off by ${by}.`
+}
+
+/** "Withdrawing this settles 2 of 3 sets." */
+export function settling({ settles }: OddsMember, sets: number, truncated: boolean): string {
+  return `Withdrawing this settles ${settles} of ${sets} ${sets === 1 ? 'set' : 'sets'}${truncated ? ' listed' : ''}.`
 }

@@ -1,15 +1,14 @@
 'use client'
 
 import { Button } from '@/components/ui/button'
-import { Field } from '@/components/ui/field'
-import { Select } from '@/components/ui/select'
-import { setFields, setFractions } from '@/lib/book/edits/fields'
+import { setFields } from '@/lib/book/edits/fields'
 import { absenceId, newId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 import { plainNumber } from '@/lib/sheet/format'
 import type { BookView } from '../book-view'
 import { CommitInput } from '../commit-input'
 import type { Desk } from '../desk'
+import { FractionChoice } from '../odds/fraction-choice'
 import { setStreamField } from '../table-edits'
 import { CardHead, CardSection } from './card-parts'
 
@@ -22,7 +21,6 @@ export function StreamCard({ view, desk, stream }: { view: BookView; desk: Desk;
   const field = (name: 'name' | 'phase' | 'density' | 'temperature' | 'pressure') => (text: string) =>
     desk.run(setStreamField(state, stream.id, name, text, view.decimal))
   const present = view.components.filter(({ id }) => !state.absence.has(absenceId(stream.id, id)))
-  const chosen = stream.fractions === 'difference' ? (stream.differenceComponentId ?? '') : stream.fractions
   return (
     <>
       <CardHead where="Stream" title={stream.tag} />
@@ -48,27 +46,7 @@ export function StreamCard({ view, desk, stream }: { view: BookView; desk: Desk;
           <p className="text-sm text-ink-3">
             Temperature and pressure are carried as notes; nothing is calculated from them.
           </p>
-          <Field label="Fractions that do not add up">
-            {(describing) => (
-              <Select
-                {...describing}
-                value={chosen}
-                onChange={(event) => {
-                  const { value } = event.target
-                  const choice = value === 'asTyped' || value === 'scale' ? value : { difference: value }
-                  desk.tryRun(setFractions(state, stream.id, choice, newId))
-                }}
-              >
-                <option value="asTyped">Stay as typed</option>
-                <option value="scale">Are scaled to 100 %</option>
-                {present.map(({ id, tag, name }) => (
-                  <option key={id} value={id}>
-                    {name || tag} is by difference
-                  </option>
-                ))}
-              </Select>
-            )}
-          </Field>
+          <FractionChoice view={view} desk={desk} stream={stream} />
           <CommitInput
             label="Note"
             lines

@@ -1,19 +1,23 @@
 'use client'
 
 import { Button } from '@/components/ui/button'
+import { Tag } from '@/components/ui/tag'
 import { setGivens } from '@/lib/book/edits/givens'
 import { setPresence } from '@/lib/book/edits/presence'
 import { newId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 import { type BookView, rowUnit } from '../book-view'
-import { flagWords, isDoubtful, type Reading, readCell, shownNumber } from '../cell-reading'
+import { flagWords, isDoubtful, keptWords, type Reading, readCell, shownNumber } from '../cell-reading'
 import { CommitInput } from '../commit-input'
 import type { Desk } from '../desk'
 import { type RowQuantity, rowTitle, valueRow } from '../rows'
 import { readTyped } from '../table-edits'
+import { sentence } from '../words'
 import { CardHead, CardSection, StateTag } from './card-parts'
 import { ConflictList } from './conflict-list'
+import { FractionNote } from './fraction-note'
 import { GivenDetails } from './given-details'
+import { NotUsed } from './not-used'
 import { otherUnits } from './other-units'
 
 type ValueCardProps = {
@@ -41,6 +45,7 @@ export function ValueCard({ view, desk, stream, quantity, componentId }: ValueCa
       />
       <p className="mt-1.5 flex flex-wrap items-center gap-x-2.5 gap-y-1 text-xs text-ink-2">
         <StateTag state={reading.state} />
+        {reading.kept ? <Tag>{sentence(keptWords[reading.kept])}</Tag> : null}
         {reading.value === null ? null : otherUnits(view, quantity, reading.value).join(' · ')}
       </p>
       {reading.reason || reading.flags ? (
@@ -53,7 +58,9 @@ export function ValueCard({ view, desk, stream, quantity, componentId }: ValueCa
           ))}
         </div>
       ) : null}
-      <ConflictList view={view} stream={stream} quantity={quantity} component={component} />
+      <ConflictList view={view} desk={desk} stream={stream} quantity={quantity} componentId={componentId} />
+      <FractionNote view={view} desk={desk} stream={stream} quantity={quantity} reading={reading} />
+      <NotUsed view={view} desk={desk} quantity={quantity} reading={reading} />
       {view.mayEdit && reading.state !== 'absent' ? (
         <CardSection title="Value">
           <CommitInput
