@@ -34,7 +34,7 @@ const median = (run: () => void, times: number): number => {
 function mathjsTime(model: Model, e: Elimination): number {
   const rows = [
     ...e.peeled.rows.filter((i) => i >= 0),
-    ...e.core.pivotRow.map((r) => e.coreRow[r] as number),
+    ...Array.from(e.core.pivotRow, (r) => e.coreRow[r] as number),
     ...e.singleRow,
   ]
   const n = model.nColumns

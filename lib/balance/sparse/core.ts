@@ -1,3 +1,7 @@
+import { type CoreFactors, FactorLog } from './core-factors'
+import { CountLists } from './count-lists'
+import { EntryTable } from './entry-table'
+
 /** Entries that cancel to less than this part of their terms are rounding and are dropped. */
 const DROP = 1e-13
 /** An entry below this part of its terms is not taken as a pivot while a better one is left. */
@@ -9,222 +13,243 @@ const THRESHOLD = 0.1
 /** Rows of least count that are looked at for each pivot. */
 const CANDIDATES = 4
 
-/** The factors of the rows that neither substitution nor single columns settle. Rows and columns are numbered locally. */
-export type CoreFactors = {
-  pivotRow: number[]
-  pivotColumn: number[]
-  pivotValue: number[]
-  /** Final entries of each row; of a pivot row, without the pivot. */
-  columns: number[][]
-  values: number[][]
-  /** In order: row `target` had `factor` x row `source` taken off. */
-  target: number[]
-  source: number[]
-  factor: number[]
-  /** Rows that depend on the pivot rows. */
-  dependent: number[]
+/** The core's rows in compressed form, numbered locally; `knownSize` is the size of each row's known terms. */
+export type CoreRows = {
+  nRows: number
+  nColumns: number
+  start: Int32Array
+  column: Int32Array
+  value: Float64Array
+  knownSize: Float64Array
 }
+
+/** An order of pivots found before, to be tried first. */
+export type PivotOrder = { row: Int32Array; column: Int32Array }
 
 /**
  * Eliminates a sparse core by Markowitz's choice (Management Science 3, 1957): few entries first, with threshold
  * pivoting. Every entry carries the size of the terms it was made of, and its rank is judged against that, so the
- * verdict does not depend on units or on the sizes of flows. `knownSize` is the size of each row's known terms: a row in
- * which they outweigh its unknowns gives these as a small difference and comes last. The arrays are taken over and changed.
+ * verdict does not depend on units or on the sizes of flows. A row whose known terms outweigh its unknowns gives these
+ * as a small difference and comes last. Pivots of `order` are taken as long as each passes the same tests as a pivot
+ * chosen anew; from the first that does not, the choice is free again, so an old order can cost time but not soundness.
  */
-export function eliminateCore(
-  columns: number[][],
-  values: number[][],
-  nColumns: number,
-  knownSize: number[],
-): CoreFactors {
-  const nRows = columns.length
-  const sizes = values.map((row) => row.map(Math.abs))
-  const rowsOf: number[][] = Array.from({ length: nColumns }, () => [])
-  const columnCount = new Int32Array(nColumns)
-  for (let i = 0; i < nRows; i++)
-    for (const j of columns[i] as number[]) {
-      rowsOf[j]?.push(i)
-      columnCount[j]!++
+export function eliminateCore(rows: CoreRows, order?: PivotOrder): CoreFactors {
+  return new Core(rows).eliminate(order)
+}
+
+class Core {
+  private readonly nRows: number
+  private readonly entries: EntryTable
+  private readonly knownSize: Float64Array
+  private readonly done: Uint8Array
+  private readonly deferred: Uint8Array
+  private readonly log: FactorLog
+  /** Rows that the pivot is taken off, with their factors and what these are unsure of. */
+  private nTargets = 0
+  private readonly target: Int32Array
+  private readonly factor: Float64Array
+  private readonly factorSize: Float64Array
+  /** Entry of each row in the column at work; of the row whose mark is the present one. */
+  private readonly entryOf: Int32Array
+  private readonly markOf: Int32Array
+  private mark = 0
+  /** Undefined while a known order is followed. */
+  private lists: CountLists | undefined
+
+  constructor(rows: CoreRows) {
+    const { nRows, nColumns, start, knownSize } = rows
+    this.nRows = nRows
+    this.entries = new EntryTable(rows)
+    this.knownSize = knownSize.slice()
+    this.done = new Uint8Array(nRows)
+    this.deferred = new Uint8Array(nRows)
+    this.log = new FactorLog(Math.min(nRows, nColumns), start[nRows] as number)
+    this.target = new Int32Array(nRows)
+    this.factor = new Float64Array(nRows)
+    this.factorSize = new Float64Array(nRows)
+    this.entryOf = new Int32Array(nRows)
+    this.markOf = new Int32Array(nRows)
+  }
+
+  eliminate(order: PivotOrder | undefined): CoreFactors {
+    if (order) this.follow(order)
+    this.lists = new CountLists(this.nRows, this.entries.columnCount.length)
+    for (let i = this.nRows - 1; i >= 0; i--) if (!this.done[i]) this.lists.put(i, this.entries.rowCount[i] as number)
+    for (let pivot = this.choose(); pivot >= 0; pivot = this.choose()) this.pivotOn(pivot)
+    const nSound = this.log.nPivots
+    this.pivotDeferred()
+    const dependent: number[] = []
+    for (let i = 0; i < this.nRows; i++) if (!this.done[i]) dependent.push(i)
+    return this.log.finish(dependent, nSound)
+  }
+
+  /** Takes pivots of a known order until one is no longer as sound as a chosen one would be. */
+  private follow({ row, column }: PivotOrder): void {
+    for (let q = 0; q < row.length; q++) {
+      const i = row[q] as number
+      const entry = this.entries.find(i, column[q] as number)
+      if (entry < 0 || !this.isSound(entry, this.largestIn(i))) return
+      this.pivotOn(entry)
     }
-  const place = new Int32Array(nColumns).fill(-1)
-  const done = new Uint8Array(nRows)
-  const deferred = new Uint8Array(nRows)
-  const buckets: number[][] = []
-  const enqueue = (i: number): void => {
-    const count = (columns[i] as number[]).length
-    if (!buckets[count]) buckets[count] = []
-    buckets[count]?.push(i)
   }
-  const factors: CoreFactors = {
-    pivotRow: [],
-    pivotColumn: [],
-    pivotValue: [],
-    columns,
-    values,
-    target: [],
-    source: [],
-    factor: [],
-    dependent: [],
+
+  private largestIn(row: number): number {
+    const { firstInRow, nextInRow, value } = this.entries
+    let largest = this.knownSize[row] as number
+    for (let k = firstInRow[row] as number; k >= 0; k = nextInRow[k] as number)
+      largest = Math.max(largest, Math.abs(value[k] as number))
+    return largest
   }
-  for (let i = 0; i < nRows; i++) enqueue(i)
+
+  private isSound(entry: number, largest: number): boolean {
+    const size = Math.abs(this.entries.value[entry] as number)
+    return size >= THRESHOLD * largest && size >= DOUBTFUL * (this.entries.size[entry] as number)
+  }
 
   /** Best entry of a row: the sparsest column among entries that are large and sound; -1 where all are doubtful. */
-  const bestIn = (i: number): number => {
-    const its = columns[i] as number[]
-    const v = values[i] as number[]
-    const s = sizes[i] as number[]
-    let largest = knownSize[i] as number
-    for (let k = 0; k < v.length; k++) largest = Math.max(largest, Math.abs(v[k] as number))
+  private bestIn(row: number): number {
+    const { firstInRow, nextInRow, column, columnCount, value } = this.entries
+    const largest = this.largestIn(row)
     let best = -1
-    for (let k = 0; k < v.length; k++) {
-      const size = Math.abs(v[k] as number)
-      if (size < THRESHOLD * largest || size < DOUBTFUL * (s[k] as number)) continue
-      if (best < 0) best = k
-      else {
-        const count = columnCount[its[k] as number] as number
-        const bestCount = columnCount[its[best] as number] as number
-        if (count < bestCount || (count === bestCount && size > Math.abs(v[best] as number))) best = k
-      }
+    let bestCount = 0
+    for (let k = firstInRow[row] as number; k >= 0; k = nextInRow[k] as number) {
+      if (!this.isSound(k, largest)) continue
+      const count = columnCount[column[k] as number] as number
+      const isBetter =
+        count < bestCount || (count === bestCount && Math.abs(value[k] as number) > Math.abs(value[best] as number))
+      if (best >= 0 && !isBetter) continue
+      best = k
+      bestCount = count
     }
     return best
   }
 
-  const pivotOn = (i: number, k: number): void => {
-    const its = columns[i] as number[]
-    const v = values[i] as number[]
-    const s = sizes[i] as number[]
-    const j = its[k] as number
-    const pivot = v[k] as number
-    const pivotSize = s[k] as number
-    done[i] = 1
-    const last = its.length - 1
-    its[k] = its[last] as number
-    v[k] = v[last] as number
-    s[k] = s[last] as number
-    its.pop()
-    v.pop()
-    s.pop()
-    for (const column of its) columnCount[column]!--
-    factors.pivotRow.push(i)
-    factors.pivotColumn.push(j)
-    factors.pivotValue.push(pivot)
-    for (const target of rowsOf[j] as number[]) if (!done[target]) subtract(target, i, j, pivot, pivotSize)
-    rowsOf[j] = []
-  }
-
-  /** Takes row `from` off row `target` so that column `j` leaves it. */
-  const subtract = (target: number, from: number, j: number, pivot: number, pivotSize: number): void => {
-    const its = columns[target] as number[]
-    const v = values[target] as number[]
-    const s = sizes[target] as number[]
-    const at = its.indexOf(j)
-    if (at < 0) return
-    const factor = (v[at] as number) / pivot
-    // What the factor is unsure of, in the same measure: its own terms and those of the pivot.
-    const factorSize = Math.max(s[at] as number, Math.abs(factor) * pivotSize) / Math.abs(pivot)
-    for (let k = 0; k < its.length; k++) place[its[k] as number] = k
-    knownSize[target] = Math.max(knownSize[target] as number, Math.abs(factor) * (knownSize[from] as number))
-    const fromColumns = columns[from] as number[]
-    const fromValues = values[from] as number[]
-    const fromSizes = sizes[from] as number[]
-    for (let k = 0; k < fromColumns.length; k++) {
-      const column = fromColumns[k] as number
-      const change = factor * (fromValues[k] as number)
-      const size = Math.max(Math.abs(factor) * (fromSizes[k] as number), factorSize * Math.abs(fromValues[k] as number))
-      const here = place[column] as number
-      if (here >= 0) {
-        v[here]! -= change
-        s[here] = Math.max(s[here] as number, size)
-      } else {
-        its.push(column)
-        v.push(-change)
-        s.push(size)
-        rowsOf[column]?.push(target)
-        columnCount[column]!++
-      }
-    }
-    let kept = 0
-    for (let k = 0; k < its.length; k++) {
-      const column = its[k] as number
-      place[column] = -1
-      const drop = k === at || Math.abs(v[k] as number) <= DROP * (s[k] as number)
-      if (drop) {
-        if (k !== at) columnCount[column]!--
-        continue
-      }
-      its[kept] = column
-      v[kept] = v[k] as number
-      s[kept] = s[k] as number
-      kept++
-    }
-    its.length = kept
-    v.length = kept
-    s.length = kept
-    factors.target.push(target)
-    factors.source.push(from)
-    factors.factor.push(factor)
-    if (!deferred[target]) enqueue(target)
-  }
-
-  /** The next pivot by least product of counts among a few of the shortest rows. */
-  const choose = (): [number, number] | undefined => {
-    let best: [number, number] | undefined
+  /** The next pivot by least product of counts among a few of the shortest rows; -1 where none is left. */
+  private choose(): number {
+    const lists = this.lists as CountLists
+    const { column, columnCount } = this.entries
+    let chosen = -1
     let bestCost = Number.POSITIVE_INFINITY
     let looked = 0
-    for (let count = 1; count < buckets.length; count++) {
-      const bucket = buckets[count]
-      if (!bucket) continue
+    for (let count = 1; count < lists.first.length; count++) {
       if (bestCost <= (count - 1) * (count - 1)) break
-      for (let q = bucket.length - 1; q >= 0; q--) {
-        const i = bucket[q] as number
-        if (done[i] || deferred[i] || (columns[i] as number[]).length !== count) {
-          bucket[q] = bucket[bucket.length - 1] as number
-          bucket.pop()
+      let after = -1
+      for (let i = lists.first[count] as number; i >= 0; i = after) {
+        after = lists.next[i] as number
+        const best = this.bestIn(i)
+        if (best < 0) {
+          this.deferred[i] = 1
+          lists.remove(i)
           continue
         }
-        const k = bestIn(i)
-        if (k < 0) {
-          deferred[i] = 1
-          bucket[q] = bucket[bucket.length - 1] as number
-          bucket.pop()
-          continue
-        }
-        const cost = (count - 1) * ((columnCount[(columns[i] as number[])[k] as number] as number) - 1)
+        const cost = (count - 1) * ((columnCount[column[best] as number] as number) - 1)
         if (cost < bestCost) {
-          best = [i, k]
+          chosen = best
           bestCost = cost
         }
-        if (++looked >= CANDIDATES) return best
+        if (cost === 0 || ++looked >= CANDIDATES) return chosen
       }
     }
-    return best
+    return chosen
   }
-  for (let pivot = choose(); pivot; pivot = choose()) pivotOn(...pivot)
-  pivotDeferred()
-  for (let i = 0; i < nRows; i++) if (!done[i]) factors.dependent.push(i)
-  return factors
+
+  /** Takes an entry as pivot: its row comes off every other row of its column, and both are done with. */
+  private pivotOn(pivot: number): void {
+    const { entries, lists, deferred, target } = this
+    const i = entries.row[pivot] as number
+    const j = entries.column[pivot] as number
+    this.done[i] = 1
+    lists?.remove(i)
+    this.log.pivot(i, j, entries.value[pivot] as number)
+    this.takeFactors(pivot, i, j)
+    for (let k = entries.firstInRow[i] as number; k >= 0; k = entries.firstInRow[i] as number) {
+      const c = entries.column[k] as number
+      const value = entries.value[k] as number
+      const size = entries.size[k] as number
+      this.log.entry(c, value)
+      entries.remove(k)
+      this.changeColumn(c, value, size)
+    }
+    if (!lists) return
+    for (let t = 0; t < this.nTargets; t++) {
+      const row = target[t] as number
+      if (!deferred[row]) lists.put(row, entries.rowCount[row] as number)
+    }
+  }
+
+  /** Empties the pivot's column, noting for each row there how much of the pivot's row has to come off it. */
+  private takeFactors(pivot: number, i: number, j: number): void {
+    const { entries, knownSize, target, factor, factorSize, log } = this
+    const { firstInColumn, row, value, size } = entries
+    const pivotValue = value[pivot] as number
+    const pivotSize = size[pivot] as number
+    entries.remove(pivot)
+    let n = 0
+    for (let k = firstInColumn[j] as number; k >= 0; k = firstInColumn[j] as number) {
+      const its = row[k] as number
+      const f = (value[k] as number) / pivotValue
+      const share = Math.abs(f)
+      target[n] = its
+      factor[n] = f
+      // What the factor is unsure of, in the same measure: its own terms and those of the pivot.
+      factorSize[n++] = Math.max(size[k] as number, share * pivotSize) / Math.abs(pivotValue)
+      knownSize[its] = Math.max(knownSize[its] as number, share * (knownSize[i] as number))
+      log.step(its, i, f)
+      entries.remove(k)
+    }
+    this.nTargets = n
+  }
+
+  /** Takes the pivot row's entry in one column, `value` with its size, off all targets. */
+  private changeColumn(column: number, value: number, size: number): void {
+    const { entries, target, factor, factorSize, entryOf, markOf } = this
+    if (this.nTargets === 0) return
+    const mark = ++this.mark
+    const { firstInColumn, nextInColumn, row } = entries
+    for (let k = firstInColumn[column] as number; k >= 0; k = nextInColumn[k] as number) {
+      entryOf[row[k] as number] = k
+      markOf[row[k] as number] = mark
+    }
+    for (let t = 0; t < this.nTargets; t++) {
+      const its = target[t] as number
+      const change = (factor[t] as number) * value
+      const made = Math.max(Math.abs(factor[t] as number) * size, (factorSize[t] as number) * Math.abs(value))
+      if (markOf[its] !== mark) {
+        if (Math.abs(change) > DROP * made) entries.add(its, column, -change, made)
+        continue
+      }
+      const k = entryOf[its] as number
+      const left = (entries.value[k] as number) - change
+      const terms = Math.max(entries.size[k] as number, made)
+      if (Math.abs(left) <= DROP * terms) entries.remove(k)
+      else {
+        entries.value[k] = left
+        entries.size[k] = terms
+      }
+    }
+  }
 
   /** Rows of doubtful entries only: the soundest first, until what is left counts as nothing. */
-  function pivotDeferred(): void {
+  private pivotDeferred(): void {
+    const waiting: number[] = []
+    for (let i = 0; i < this.nRows; i++) if (!this.done[i] && this.deferred[i]) waiting.push(i)
     for (;;) {
-      let best: [number, number] | undefined
+      const { firstInRow, nextInRow, value, size } = this.entries
+      let best = -1
       let soundest = 0
-      for (let i = 0; i < nRows; i++) {
-        if (done[i] || !deferred[i]) continue
-        const v = values[i] as number[]
-        for (let k = 0; k < v.length; k++) {
-          const size = Math.abs(v[k] as number)
-          if (size <= RANK_TOLERANCE * ((sizes[i] as number[])[k] as number)) continue
-          const soundness = size / Math.max((sizes[i] as number[])[k] as number, knownSize[i] as number)
-          if (soundness > soundest) {
-            soundest = soundness
-            best = [i, k]
-          }
+      for (const i of waiting) {
+        if (this.done[i]) continue
+        for (let k = firstInRow[i] as number; k >= 0; k = nextInRow[k] as number) {
+          const own = Math.abs(value[k] as number)
+          if (own <= RANK_TOLERANCE * (size[k] as number)) continue
+          const soundness = own / Math.max(size[k] as number, this.knownSize[i] as number)
+          if (soundness <= soundest) continue
+          soundest = soundness
+          best = k
         }
       }
-      if (!best) return
-      if (!best) return
-      pivotOn(...best)
+      if (best < 0) return
+      this.pivotOn(best)
     }
   }
 }

@@ -1,7 +1,9 @@
 import type { CompiledRows } from './compiled-rows'
-import { type CoreFactors, eliminateCore } from './core'
+import { type CoreRows, eliminateCore } from './core'
+import type { CoreFactors } from './core-factors'
 import { equilibrate } from './equilibrate'
 import { type Peeled, peel } from './peel'
+import type { PivotMemory } from './pivot-memory'
 
 /**
  * Rows taken apart in three parts: columns found by substitution (`peeled`), the core eliminated by pivots, and columns
@@ -15,8 +17,8 @@ export type Elimination = {
   singleColumn: number[]
   core: CoreFactors
   /** Global row and column of each local one of the core, and their scales (powers of two). */
-  coreRow: number[]
-  coreColumn: number[]
+  coreRow: Int32Array
+  coreColumn: Int32Array
   rowScale: Float64Array
   columnScale: Float64Array
   /** Ascending. */
@@ -26,24 +28,58 @@ export type Elimination = {
   rank: number
 }
 
-/** Finds rank, pivots, free columns and dependent rows of a set of rows. */
-export function eliminate(rows: CompiledRows, nonNegative: Uint8Array): Elimination {
-  const { nRows, nColumns, start, column, value, columnStart, rowOfEntry } = rows
+/**
+ * Finds rank, pivots, free columns and dependent rows of a set of rows. With a `memory`, pivots of the last time that
+ * rows of the same pattern were eliminated are tried first, and what was found is remembered.
+ */
+export function eliminate(rows: CompiledRows, nonNegative: Uint8Array, memory?: PivotMemory): Elimination {
+  const { nRows, nColumns } = rows
   const peeled = peel(rows, nonNegative)
   const settled = Uint8Array.from(peeled.known)
   const rowDone = new Uint8Array(nRows)
   const dependent: number[] = []
+  for (let i = 0; i < nRows; i++) {
+    if (!peeled.used[i] && peeled.left[i] !== 0) continue
+    rowDone[i] = 1
+    if (!peeled.used[i]) dependent.push(i)
+  }
+  const { singleRow, singleColumn } = takeSingles(rows, settled, rowDone)
+  const { core: local, coreRow, coreColumn, largest } = coreOf(rows, peeled, settled, rowDone)
+  const { rowScale, columnScale } = equilibrate(local, largest)
+  for (let r = 0; r < local.nRows; r++) local.knownSize[r]! *= rowScale[r] as number
+  const core = eliminateCore(local, memory?.recall(local))
+  memory?.remember(local, core)
+  for (const r of core.dependent) dependent.push(coreRow[r] as number)
+  for (let q = 0; q < core.pivotColumn.length; q++) settled[coreColumn[core.pivotColumn[q] as number] as number] = 1
+  const free: number[] = []
+  for (let j = 0; j < nColumns; j++) if (!settled[j]) free.push(j)
+  return {
+    rows,
+    peeled,
+    singleRow,
+    singleColumn,
+    core,
+    coreRow,
+    coreColumn,
+    rowScale,
+    columnScale,
+    free,
+    dependent: dependent.sort((a, b) => a - b),
+    rank: nColumns - free.length,
+  }
+}
+
+/** Takes off columns that stand in one row that is left, with that row, until there are none; marks both. */
+function takeSingles(
+  { nRows, nColumns, start, column, columnStart, rowOfEntry }: CompiledRows,
+  settled: Uint8Array,
+  rowDone: Uint8Array,
+): { singleRow: number[]; singleColumn: number[] } {
   const inRows = new Int32Array(nColumns)
   for (let i = 0; i < nRows; i++) {
-    if (peeled.used[i] || peeled.left[i] === 0) {
-      rowDone[i] = 1
-      if (!peeled.used[i]) dependent.push(i)
-      continue
-    }
-    for (let k = start[i] as number; k < (start[i + 1] as number); k++)
-      if (!settled[column[k] as number]) inRows[column[k] as number]!++
+    if (rowDone[i]) continue
+    for (let k = start[i] as number; k < (start[i + 1] as number); k++) inRows[column[k] as number]!++
   }
-
   const singleRow: number[] = []
   const singleColumn: number[] = []
   const queue: number[] = []
@@ -63,55 +99,55 @@ export function eliminate(rows: CompiledRows, nonNegative: Uint8Array): Eliminat
       if (!settled[other] && --inRows[other]! === 1) queue.push(other)
     }
   }
+  return { singleRow, singleColumn }
+}
 
-  const coreRow: number[] = []
-  for (let i = 0; i < nRows; i++) if (!rowDone[i]) coreRow.push(i)
-  const coreColumn: number[] = []
-  const local = new Int32Array(nColumns).fill(-1)
-  const knownSize: number[] = []
+/** The rows and columns that are left, numbered anew; `largest` is the largest right-hand side of all, 1 where all are 0. */
+function coreOf(
+  { nRows, nColumns, start, column, value, rhs }: CompiledRows,
+  { known, value: x }: Peeled,
+  settled: Uint8Array,
+  rowDone: Uint8Array,
+): { core: CoreRows; coreRow: Int32Array; coreColumn: Int32Array; largest: number } {
+  let count = 0
+  let entries = 0
   let largest = 0
-  for (let i = 0; i < nRows; i++) largest = Math.max(largest, Math.abs(rows.rhs[i] as number))
-  const columns: number[][] = []
-  const values: number[][] = []
-  for (const i of coreRow) {
-    const its: number[] = []
-    const theirs: number[] = []
-    let size = Math.abs(rows.rhs[i] as number)
+  for (let i = 0; i < nRows; i++) {
+    largest = Math.max(largest, Math.abs(rhs[i] as number))
+    if (rowDone[i]) continue
+    count++
+    entries += (start[i + 1] as number) - (start[i] as number)
+  }
+  const coreRow = new Int32Array(count)
+  const coreColumn = new Int32Array(nColumns)
+  const local = new Int32Array(nColumns).fill(-1)
+  const core: CoreRows = {
+    nRows: count,
+    nColumns: 0,
+    start: new Int32Array(count + 1),
+    column: new Int32Array(entries),
+    value: new Float64Array(entries),
+    knownSize: new Float64Array(count),
+  }
+  let r = 0
+  let next = 0
+  for (let i = 0; i < nRows; i++) {
+    if (rowDone[i]) continue
+    let size = Math.abs(rhs[i] as number)
     for (let k = start[i] as number; k < (start[i + 1] as number); k++) {
       const j = column[k] as number
-      if (peeled.known[j]) size += Math.abs((value[k] as number) * (peeled.value[j] as number))
+      if (known[j]) size += Math.abs((value[k] as number) * (x[j] as number))
       if (settled[j]) continue
-      if (local[j] === -1) local[j] = coreColumn.push(j) - 1
-      its.push(local[j] as number)
-      theirs.push(value[k] as number)
+      if (local[j] === -1) {
+        coreColumn[core.nColumns] = j
+        local[j] = core.nColumns++
+      }
+      core.column[next] = local[j] as number
+      core.value[next++] = value[k] as number
     }
-    columns.push(its)
-    values.push(theirs)
-    knownSize.push(size)
+    core.knownSize[r] = size
+    coreRow[r++] = i
+    core.start[r] = next
   }
-  const { rowScale, columnScale } = equilibrate(columns, values, coreColumn.length, knownSize, largest || 1)
-  const core = eliminateCore(
-    columns,
-    values,
-    coreColumn.length,
-    knownSize.map((size, r) => size * (rowScale[r] as number)),
-  )
-  for (const r of core.dependent) dependent.push(coreRow[r] as number)
-  for (const c of core.pivotColumn) settled[coreColumn[c] as number] = 1
-  const free: number[] = []
-  for (let j = 0; j < nColumns; j++) if (!settled[j]) free.push(j)
-  return {
-    rows,
-    peeled,
-    singleRow,
-    singleColumn,
-    core,
-    coreRow,
-    coreColumn,
-    rowScale,
-    columnScale,
-    free,
-    dependent: dependent.sort((a, b) => a - b),
-    rank: nColumns - free.length,
-  }
+  return { core, coreRow, coreColumn: coreColumn.subarray(0, core.nColumns), largest: largest || 1 }
 }

@@ -1,3 +1,4 @@
+import type { CompiledRows } from './compiled-rows'
 import type { Elimination } from './elimination'
 import { NOTHING } from './peel'
 
@@ -20,13 +21,13 @@ export function applyInverse(e: Elimination, rhs: Float64Array): Float64Array {
     const j = peeledColumns[q] as number
     if (i < 0 || (!started && rhs[i] === 0)) continue
     started = true
-    x[j] = closing(e, i, j, rhs[i] as number, x).value
+    x[j] = closing(e.rows, i, j, rhs[i] as number, x)
   }
   backSubstitute(e, forward(e, rhs, x), x)
   for (let q = e.singleRow.length - 1; q >= 0; q--) {
     const i = e.singleRow[q] as number
     const j = e.singleColumn[q] as number
-    x[j] = closing(e, i, j, rhs[i] as number, x).value
+    x[j] = closing(e.rows, i, j, rhs[i] as number, x)
   }
   return x
 }
@@ -52,61 +53,44 @@ function forward(e: Elimination, rhs: Float64Array, x: Float64Array): Float64Arr
 
 function backSubstitute(e: Elimination, w: Float64Array, x: Float64Array): void {
   const { core, coreColumn, columnScale } = e
-  for (let q = core.pivotRow.length - 1; q >= 0; q--) {
-    const r = core.pivotRow[q] as number
-    const its = core.columns[r] as number[]
-    const u = core.values[r] as number[]
-    let rest = w[r] as number
-    for (let k = 0; k < its.length; k++) {
-      const c = its[k] as number
-      rest -= ((u[k] as number) * (x[coreColumn[c] as number] as number)) / (columnScale[c] as number)
+  const { start, column, value, pivotRow, pivotColumn, pivotValue } = core
+  for (let q = pivotRow.length - 1; q >= 0; q--) {
+    let rest = w[pivotRow[q] as number] as number
+    for (let k = start[q] as number; k < (start[q + 1] as number); k++) {
+      const c = column[k] as number
+      rest -= ((value[k] as number) * (x[coreColumn[c] as number] as number)) / (columnScale[c] as number)
     }
-    const c = core.pivotColumn[q] as number
-    x[coreColumn[c] as number] = (rest / (core.pivotValue[q] as number)) * (columnScale[c] as number)
+    const c = pivotColumn[q] as number
+    x[coreColumn[c] as number] = (rest / (pivotValue[q] as number)) * (columnScale[c] as number)
   }
 }
 
-/** The column j that closes row i, with the sum and size of the other terms over the pivot. */
-function closing(
-  e: Elimination,
-  i: number,
-  j: number,
-  rhs: number,
-  x: Float64Array,
-  sizes?: Float64Array,
-): { value: number; terms: number; size: number } {
-  const { start, column, value } = e.rows
+/** The value of column j that closes row i. */
+function closing({ start, column, value }: CompiledRows, i: number, j: number, rhs: number, x: Float64Array): number {
   let rest = rhs
-  let terms = Math.abs(rhs)
-  let size = Math.abs(rhs)
   let pivot = 0
   for (let k = start[i] as number; k < (start[i + 1] as number); k++) {
-    const a = value[k] as number
     const at = column[k] as number
-    if (at === j) pivot = a
-    else {
-      const term = a * (x[at] as number)
-      rest -= term
-      terms += Math.abs(term)
-      if (sizes) size = Math.max(size, Math.abs(a) * (sizes[at] as number))
-    }
+    if (at === j) pivot = value[k] as number
+    else rest -= (value[k] as number) * (x[at] as number)
   }
-  const over = Math.abs(pivot)
-  return { value: rest / pivot, terms: terms / over, size: Math.max(size, terms) / over }
+  return rest / pivot
 }
 
 /** rhs - A x on the rows that were used as pivots of the core or for single columns, 0 elsewhere. */
 function pivotResidual(e: Elimination, rhs: Float64Array | undefined, x: Float64Array): Float64Array {
   const residual = new Float64Array(e.rows.nRows)
-  const put = (i: number): void => {
-    let rest = rhs ? (rhs[i] as number) : 0
-    for (let k = e.rows.start[i] as number; k < (e.rows.start[i + 1] as number); k++)
-      rest -= (e.rows.value[k] as number) * (x[e.rows.column[k] as number] as number)
-    residual[i] = rest
-  }
-  for (const r of e.core.pivotRow) put(e.coreRow[r] as number)
-  for (const i of e.singleRow) put(i)
+  for (const r of e.core.pivotRow) residual[e.coreRow[r] as number] = rest(e.rows, e.coreRow[r] as number, rhs, x)
+  for (const i of e.singleRow) residual[i] = rest(e.rows, i, rhs, x)
   return residual
+}
+
+/** What row i leaves of its right-hand side. */
+function rest({ start, column, value }: CompiledRows, i: number, rhs: Float64Array | undefined, x: Float64Array) {
+  let left = rhs ? (rhs[i] as number) : 0
+  for (let k = start[i] as number; k < (start[i + 1] as number); k++)
+    left -= (value[k] as number) * (x[column[k] as number] as number)
+  return left
 }
 
 /** The particular solution with all free columns 0, refined against the original rows. */
@@ -190,35 +174,65 @@ function settle(
   nothing: number,
   w?: Float64Array,
 ): void {
-  const { core, coreColumn, columnScale } = e
-  for (let q = core.pivotRow.length - 1; q >= 0; q--) {
-    const r = core.pivotRow[q] as number
-    const its = core.columns[r] as number[]
-    const u = core.values[r] as number[]
+  const { coreColumn, columnScale } = e
+  const { start, column, value, pivotRow, pivotColumn, pivotValue } = e.core
+  for (let q = pivotRow.length - 1; q >= 0; q--) {
+    const r = pivotRow[q] as number
     let terms = known[r] as number
     let largest = known[r] as number
     let rest = w ? (w[r] as number) : 0
-    for (let k = 0; k < its.length; k++) {
-      const c = its[k] as number
+    for (let k = start[q] as number; k < (start[q + 1] as number); k++) {
+      const c = column[k] as number
       const j = coreColumn[c] as number
-      const a = (u[k] as number) / (columnScale[c] as number)
+      const a = (value[k] as number) / (columnScale[c] as number)
       const term = a * (x[j] as number)
       rest -= term
       terms += Math.abs(term)
       largest = Math.max(largest, Math.abs(a) * (size[j] as number))
     }
-    const c = core.pivotColumn[q] as number
-    if (w) x[coreColumn[c] as number] = (rest / (core.pivotValue[q] as number)) * (columnScale[c] as number)
-    const over = Math.abs(core.pivotValue[q] as number) / (columnScale[c] as number)
+    const c = pivotColumn[q] as number
+    const scale = columnScale[c] as number
+    const pivot = pivotValue[q] as number
+    if (w) x[coreColumn[c] as number] = (rest / pivot) * scale
+    const over = Math.abs(pivot) / scale
     keep(x, size, coreColumn[c] as number, terms / over, largest / over, nothing)
   }
   for (let q = e.singleRow.length - 1; q >= 0; q--) {
     const i = e.singleRow[q] as number
     const j = e.singleColumn[q] as number
-    const closed = closing(e, i, j, rhs ? (rhs[i] as number) : 0, x, size)
-    x[j] = closed.value
-    keep(x, size, j, closed.terms, closed.size, nothing)
+    settleSingle(e.rows, i, j, rhs ? (rhs[i] as number) : 0, x, size, nothing)
   }
+}
+
+/** Closes row i by column j, and notes the sizes of what its value was made of. */
+function settleSingle(
+  { start, column, value }: CompiledRows,
+  i: number,
+  j: number,
+  rhs: number,
+  x: Float64Array,
+  size: Float64Array,
+  nothing: number,
+): void {
+  let left = rhs
+  let terms = Math.abs(rhs)
+  let largest = terms
+  let pivot = 0
+  for (let k = start[i] as number; k < (start[i + 1] as number); k++) {
+    const a = value[k] as number
+    const at = column[k] as number
+    if (at === j) {
+      pivot = a
+      continue
+    }
+    const term = a * (x[at] as number)
+    left -= term
+    terms += Math.abs(term)
+    largest = Math.max(largest, Math.abs(a) * (size[at] as number))
+  }
+  const over = Math.abs(pivot)
+  x[j] = left / pivot
+  keep(x, size, j, terms / over, Math.max(largest, terms) / over, nothing)
 }
 
 function keep(x: Float64Array, size: Float64Array, j: number, terms: number, largest: number, nothing: number): void {

@@ -48,8 +48,8 @@ export function solveTransposed(e: Elimination, target: Float64Array): { y: Floa
 /** Multipliers of the core rows as they stood before the elimination, in its scales; noise is 0. */
 function coreMultipliers(e: Elimination, w: Float64Array, terms: Float64Array): Float64Array {
   const { core, coreRow, coreColumn, columnScale } = e
-  const local = coreColumn.map((j, c) => (w[j] as number) * (columnScale[c] as number))
-  const localTerms = coreColumn.map((j, c) => (terms[j] as number) * (columnScale[c] as number))
+  const local = columnScale.map((scale, c) => (w[coreColumn[c] as number] as number) * scale)
+  const localTerms = columnScale.map((scale, c) => (terms[coreColumn[c] as number] as number) * scale)
   const z = new Float64Array(coreRow.length)
   for (let q = 0; q < core.pivotRow.length; q++) {
     const r = core.pivotRow[q] as number
@@ -57,12 +57,10 @@ function coreMultipliers(e: Elimination, w: Float64Array, terms: Float64Array): 
     if (Math.abs(local[c] as number) <= MOVES * (localTerms[c] as number)) continue
     const factor = (local[c] as number) / (core.pivotValue[q] as number)
     z[r] = factor
-    const its = core.columns[r] as number[]
-    const u = core.values[r] as number[]
-    for (let k = 0; k < its.length; k++) {
-      const part = (u[k] as number) * factor
-      local[its[k] as number]! -= part
-      localTerms[its[k] as number]! += Math.abs(part)
+    for (let k = core.start[q] as number; k < (core.start[q + 1] as number); k++) {
+      const part = (core.value[k] as number) * factor
+      local[core.column[k] as number]! -= part
+      localTerms[core.column[k] as number]! += Math.abs(part)
     }
   }
   const zTerms = z.map(Math.abs)
