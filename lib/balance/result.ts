@@ -49,6 +49,7 @@ export type Result = {
   conflictsTruncated?: boolean
   checks: Check[]
   measureNext: never[]
+  roots?: Solution['roots']
   diagnostics: Diagnostic[]
   status: SolveStatus
 }
@@ -108,6 +109,7 @@ export function toResult(problem: Problem, solution: Solution): Result {
     ...(solution.conflictsTruncated && { conflictsTruncated: true }),
     checks: [],
     measureNext: [],
+    ...(solution.roots && { roots: solution.roots }),
     diagnostics: solution.diagnostics,
     status: solution.status,
   }

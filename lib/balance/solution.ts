@@ -105,5 +105,7 @@ export type Solution = {
   conflicts: Conflict[]
   /** More minimal sets exist than are listed. */
   conflictsTruncated?: boolean
+  /** Where the rules can be met in several ways: unknown cells that have a value in each, with all of them, ascending. */
+  roots?: { cells: (Place & { values: number[] })[] }
   diagnostics: Diagnostic[]
 }

@@ -2,16 +2,16 @@ import { blockedCells } from './conflicts/blocked'
 import { describeConflicts } from './conflicts/describe-conflicts'
 import { settle } from './conflicts/find-conflicts'
 import { structureDiagnostics } from './diagnostics'
-import { columnForm } from './measure/measure'
 import { buildModel, ColumnKind, type Model } from './model'
 import type { Problem } from './problem'
+import { findRoots } from './roots/find-roots'
+import { columnWithRoots, flagTouching, rootValues } from './roots/root-cells'
+import { rootDiagnostics } from './roots/root-diagnostics'
 import { fixedRuleValue, ruleInUse } from './rows/assemble'
 import type { Solution } from './solution'
 import { findAmplified } from './states/amplification'
 import { emptyCells, fillCells } from './states/fill-cells'
 import { freeScaleBlocks } from './states/free-scale'
-import { fixedValue } from './states/knowledge'
-import { takenByPending } from './states/open-freedom'
 import { pendingDiagnostics, zeroInletDiagnostics } from './states/rule-diagnostics'
 import { countCells, extentResults, freedomWithin } from './states/summary'
 
@@ -35,24 +35,27 @@ export function solve(problem: Problem): Solution {
 }
 
 function solveModel(model: Model): Solution {
-  const settled = settle(model)
+  const linear = settle(model)
+  const roots = findRoots(model, linear)
+  const settled = roots?.sure ?? linear
   const { assembly, resolved, atOdds } = settled
   const { knowledge } = resolved
-  const cells = fillCells(model, knowledge, assembly.givens, atOdds)
-  const amplification = findAmplified(model, settled, cells)
+  const cells = fillCells(model, knowledge, assembly.givens, atOdds, roots)
+  const amplification = findAmplified(model, roots?.near ?? settled, cells)
+  if (roots) amplification.push(...flagTouching(model, roots, linear.resolved.knowledge, cells))
   const counts = countCells(model, cells)
-  const known = (column: number): number | undefined => fixedValue(knowledge, columnForm(column))
-  const parameterFreedom = freedomWithin(model, knowledge.elimination.rows, [ColumnKind.parameter])
-  const extentFreedom =
-    freedomWithin(model, knowledge.elimination.rows, [ColumnKind.extent, ColumnKind.parameter]) - parameterFreedom
+  const known = (column: number): number | undefined => columnWithRoots(knowledge, roots, column)
+  const { elimination: counted } = (roots?.counted ?? settled).resolved.knowledge
+  const parameterFreedom = freedomWithin(model, counted.rows, [ColumnKind.parameter])
+  const extentFreedom = freedomWithin(model, counted.rows, [ColumnKind.extent, ColumnKind.parameter]) - parameterFreedom
+  const several = roots && rootValues(model, roots, cells)
   return {
     status: settled.sets.length > 0 ? 'atOdds' : counts.unknown > 0 ? 'open' : 'solved',
     summary: {
       ...counts,
-      degreesOfFreedom:
-        knowledge.elimination.free.length - parameterFreedom - takenByPending(model, knowledge, resolved.left),
+      degreesOfFreedom: counted.free.length - parameterFreedom,
       extentFreedom,
-      freeScale: freeScaleBlocks(model, assembly, (s) => known(model.totalColumn[s] as number) === 0),
+      freeScale: freeScaleBlocks(model, linear.assembly, (s) => known(model.totalColumn[s] as number) === 0),
     },
     nStreams: model.nStreams,
     nComponents: model.nComponents,
@@ -62,10 +65,12 @@ function solveModel(model: Model): Solution {
     extents: extentResults(model, givenExtents(model), known),
     conflicts: describeConflicts(model, settled),
     ...(settled.truncated && { conflictsTruncated: true }),
+    ...(several && { roots: several }),
     diagnostics: [
       ...structureDiagnostics(model),
       ...zeroInletDiagnostics(model, knowledge),
-      ...pendingDiagnostics(model, assembly, resolved.left),
+      ...pendingDiagnostics(model, assembly, roots?.left ?? []),
+      ...(roots ? rootDiagnostics(model, assembly, roots, cells) : []),
     ],
   }
 }

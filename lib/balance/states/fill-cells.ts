@@ -1,8 +1,10 @@
 import type { Model } from '../model'
+import type { Roots } from '../roots/find-roots'
+import { knownWithRoots } from '../roots/root-cells'
 import type { GivenInUse } from '../rows/givens'
 import { CellFlag, CellState, type Solution, slotOf, slotsPerStream } from '../solution'
 import { cellQuantityOf, forEachCell } from './cells'
-import { type Knowledge, knownMeasure } from './knowledge'
+import type { Knowledge } from './knowledge'
 
 /** The flat arrays of a solution, all cells that do not exist `absent`. */
 export type CellArrays = Pick<Solution, 'states' | 'values' | 'flags'>
@@ -28,14 +30,17 @@ export function fillCells(
   knowledge: Knowledge,
   givens: readonly GivenInUse[],
   atOdds: ReadonlySet<number>,
+  roots?: Roots,
 ): CellArrays {
   const cells = emptyCells(model)
   const { states, values } = cells
+  const local: number[] = []
   forEachCell(model, ({ slot, measure, component, stream }) => {
     const single = component >= 0 && measure.denominator && (model.present[stream] as number[]).length === 1
-    const value = single ? 1 : knownMeasure(knowledge, measure)
-    states[slot] = value === undefined ? CellState.unknown : CellState.solvable
-    if (value !== undefined) values[slot] = value
+    const known = single ? { value: 1, isLocal: false } : knownWithRoots(knowledge, roots, measure)
+    states[slot] = known === undefined ? CellState.unknown : CellState.solvable
+    if (known) values[slot] = known.value
+    if (known?.isLocal) local.push(slot)
   })
   for (const entry of inDisplayOrder(givens)) {
     const quantity = cellQuantityOf(model, entry.given.quantity)
@@ -47,6 +52,7 @@ export function fillCells(
     values[slot] = entry.typed
   }
   for (let stream = 0; stream < model.nStreams; stream++) flagStream(model, stream, cells)
+  for (const slot of local) if (states[slot] === CellState.solvable) cells.flags[slot]! |= CellFlag.localOnly
   return cells
 }
 
