@@ -16,6 +16,7 @@ import type { Desk } from './desk'
 import { NotesPanel, noteLines } from './notes-panel'
 import { OddsPanel } from './odds/odds-panel'
 import { Legend, type PanelKey, PanelTabs } from './panel-tabs'
+import type { RulesDraft } from './rules/rules-as-text'
 import { RulesPanel } from './rules/rules-panel'
 import { useNarrow } from './use-reader'
 
@@ -41,6 +42,7 @@ export function BenchBody(props: BenchBodyProps) {
   const { view, desk, history, panel, shown } = props
   const narrow = useNarrow()
   const [cardOpen, setCardOpen] = useState(false)
+  const [rulesDraft, setRulesDraft] = useState<RulesDraft>({ asText: false, typed: null })
   const card = <CellCard view={view} desk={desk} pane={shown.pane} place={shown.place} />
   const shared = { undo: history.undo, redo: history.redo }
   return (
@@ -102,7 +104,9 @@ export function BenchBody(props: BenchBodyProps) {
                     aria-labelledby={`tab-${panel}`}
                     className={panel === 'connections' ? 'min-h-0 flex-1' : 'min-h-0 flex-1 overflow-y-auto'}
                   >
-                    {panel === 'rules' ? <RulesPanel view={view} desk={desk} /> : null}
+                    {panel === 'rules' ? (
+                      <RulesPanel view={view} desk={desk} draft={rulesDraft} onDraft={setRulesDraft} />
+                    ) : null}
                     {panel === 'odds' ? <OddsPanel view={view} desk={desk} /> : null}
                     {panel === 'notes' ? <NotesPanel view={view} onStream={props.onStream} /> : null}
                     {panel === 'connections' && view.plant.length > 0 ? (

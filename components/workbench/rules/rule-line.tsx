@@ -4,11 +4,14 @@ import { Trash2 } from 'lucide-react'
 import { IconButton } from '@/components/ui/button'
 import { Field } from '@/components/ui/field'
 import { Select } from '@/components/ui/select'
+import { shiftDecimal } from '@/lib/book/decimal-text'
 import { renameTag } from '@/lib/book/edits/fields'
 import { removeRules } from '@/lib/book/edits/remove'
 import { type RuleInput, updateRule } from '@/lib/book/edits/rules'
 import { newId } from '@/lib/book/ids'
 import { type RecordOf, ruleKinds } from '@/lib/book/kinds'
+import { setRuleLine } from '@/lib/book/rule-text/rules-text'
+import { ruleLine } from '@/lib/book/rule-text/write-line'
 import { type RulePart, ruleParts } from '@/lib/book/rule-to-problem'
 import { plainNumber } from '@/lib/sheet/format'
 import { readNumber } from '@/lib/sheet/read-number'
@@ -87,6 +90,20 @@ export function RuleLine({ view, desk, rule }: RuleLineProps) {
             }}
           />
         ) : null}
+        {'value' in parts ? (
+          <CommitInput
+            label="Half-width, ±"
+            className="w-24 text-xs [&_input]:h-8"
+            placeholder="exact"
+            inputMode="decimal"
+            value={rule.halfWidth === null ? '' : plainNumber(rule.halfWidth, view.decimal)}
+            disabled={!mayEdit}
+            onCommit={(text) => {
+              const width = readHalfWidth(view, text)
+              return typeof width === 'string' ? width : change({ halfWidth: width })
+            }}
+          />
+        ) : null}
         {'text' in parts ? (
           <CommitInput
             label="Formula"
@@ -121,6 +138,13 @@ export function RuleLine({ view, desk, rule }: RuleLineProps) {
           </IconButton>
         ) : null}
       </div>
+      <CommitInput
+        label="As text"
+        className="text-xs [&_input]:h-8 [&_input]:font-mono"
+        value={ruleLine(state, rule)}
+        disabled={!mayEdit}
+        onCommit={(text) => desk.run(setRuleLine(state, rule.id, text, newId))}
+      />
       {'streams' in parts ? <StreamChecks view={view} rule={rule} onChange={(streams) => change({ streams })} /> : null}
       <p className={problem ? 'text-sm text-odds-ink' : 'text-sm text-ink-3'}>{problem ?? ruleSays[rule.ruleKind]}</p>
     </li>
@@ -151,15 +175,32 @@ function valueText(view: BookView, rule: Rule): string {
   return rule.value === null ? '' : plainNumber(rule.value, view.decimal)
 }
 
-/** A number, a percentage, or the name of a parameter. */
-function readValue(view: BookView, text: string): { value: number | null; parameterId: string | null } | string {
+type Typed = { value: number | null; parameterId: string | null; halfWidth: number | null }
+
+/** A number, a percentage, or the name of a parameter; the half-width is half a unit in the last typed digit. */
+function readValue(view: BookView, text: string): Typed | string {
   const typed = text.trim()
-  if (typed === '') return { value: null, parameterId: null }
+  if (typed === '') return { value: null, parameterId: null, halfWidth: null }
   for (const parameter of view.state.parameter.values())
-    if (parameter.tag.trim() === typed) return { value: null, parameterId: parameter.id }
+    if (parameter.tag.trim() === typed) return { value: null, parameterId: parameter.id, halfWidth: null }
   const number = readNumber(typed, view.decimal)
   if (!number.ok) return `${number.reason} Or type the name of a parameter.`
-  if (number.rest === '%') return { value: Number((number.value / 100).toPrecision(15)), parameterId: null }
+  const { halfWidth } = number
+  if (number.rest === '%')
+    return {
+      value: shiftDecimal(number.value, -2),
+      parameterId: null,
+      halfWidth: halfWidth === null ? null : shiftDecimal(halfWidth, -2),
+    }
   if (number.rest !== '') return `“${number.rest}” is not understood here: type a number, or a percentage.`
-  return { value: number.value, parameterId: null }
+  return { value: number.value, parameterId: null, halfWidth }
+}
+
+function readHalfWidth(view: BookView, text: string): number | null | string {
+  if (text.trim() === '') return null
+  const number = readNumber(text.replace(/^\s*±\s*/, ''), view.decimal)
+  if (!number.ok) return number.reason
+  if (number.rest !== '' && number.rest !== '%') return 'A half-width is a plain number or a percentage.'
+  const width = number.rest === '%' ? shiftDecimal(number.value, -2) : number.value
+  return width > 0 ? width : 'A half-width is more than 0: leave it empty where the rule is exact.'
 }

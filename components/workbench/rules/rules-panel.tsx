@@ -16,9 +16,13 @@ import { ParameterLine } from './parameter-line'
 import { ReactionLine } from './reaction-line'
 import { RuleLine } from './rule-line'
 import { ruleTitles } from './rule-words'
+import { RulesAsText, type RulesDraft } from './rules-as-text'
+
+type RulesPanelProps = { view: BookView; desk: Desk; draft: RulesDraft; onDraft: (draft: RulesDraft) => void }
 
 /** Relations between streams, reactions, and the parameters that they share. */
-export function RulesPanel({ view, desk }: { view: BookView; desk: Desk }) {
+export function RulesPanel({ view, desk, draft, onDraft }: RulesPanelProps) {
+  const { asText } = draft
   const { state, mayEdit } = view
   const rules = inOrder(state.rule)
   const reactions = inOrder(state.reaction)
@@ -26,53 +30,64 @@ export function RulesPanel({ view, desk }: { view: BookView; desk: Desk }) {
   const reactor = view.plant.find(({ unitKind }) => unitKind === 'reactor') ?? view.plant[0]
   return (
     <div>
-      {mayEdit ? (
-        <div className="flex flex-wrap gap-2 border-b border-hair px-4 py-2">
-          <Menu
-            trigger={
-              <Button size="small">
-                <Plus className="size-3.5" aria-hidden="true" /> Rule
-              </Button>
-            }
-          >
-            {ruleKinds.map((ruleKind) => (
-              <MenuItem key={ruleKind} onSelect={() => desk.tryRun(addRule(state, { ruleKind }, newId))}>
-                {ruleTitles[ruleKind]}
-              </MenuItem>
-            ))}
-          </Menu>
-          <Button
-            size="small"
-            disabled={!reactor}
-            title={reactor ? undefined : 'Add a unit first: a reaction runs in a unit'}
-            onClick={() => reactor && desk.tryRun(addReaction(state, { unitId: reactor.id }, newId))}
-          >
-            <Plus className="size-3.5" aria-hidden="true" /> Reaction
-          </Button>
-          <Button size="small" onClick={() => desk.tryRun(addParameters(state, { items: [{}] }, newId))}>
-            <Plus className="size-3.5" aria-hidden="true" /> Parameter
-          </Button>
-        </div>
-      ) : null}
-      {rules.length + reactions.length + parameters.length === 0 ? (
+      <div className="flex flex-wrap gap-2 border-b border-hair px-4 py-2">
+        {mayEdit ? (
+          <>
+            <Menu
+              trigger={
+                <Button size="small">
+                  <Plus className="size-3.5" aria-hidden="true" /> Rule
+                </Button>
+              }
+            >
+              {ruleKinds.map((ruleKind) => (
+                <MenuItem key={ruleKind} onSelect={() => desk.tryRun(addRule(state, { ruleKind }, newId))}>
+                  {ruleTitles[ruleKind]}
+                </MenuItem>
+              ))}
+            </Menu>
+            <Button
+              size="small"
+              disabled={!reactor}
+              title={reactor ? undefined : 'Add a unit first: a reaction runs in a unit'}
+              onClick={() => reactor && desk.tryRun(addReaction(state, { unitId: reactor.id }, newId))}
+            >
+              <Plus className="size-3.5" aria-hidden="true" /> Reaction
+            </Button>
+            <Button size="small" onClick={() => desk.tryRun(addParameters(state, { items: [{}] }, newId))}>
+              <Plus className="size-3.5" aria-hidden="true" /> Parameter
+            </Button>
+          </>
+        ) : null}
+        <span className="flex-1" />
+        <Button
+          size="small"
+          look="quiet"
+          aria-pressed={asText}
+          onClick={() => onDraft({ ...draft, asText: !asText })}
+          className="aria-pressed:bg-brook-wash aria-pressed:text-ink"
+        >
+          As text
+        </Button>
+      </div>
+      <List title="Parameters">
+        {parameters.map((parameter) => (
+          <ParameterLine key={parameter.id} view={view} desk={desk} parameter={parameter} />
+        ))}
+      </List>
+      {asText ? <RulesAsText view={view} desk={desk} draft={draft} onDraft={onDraft} /> : null}
+      {!asText && rules.length + reactions.length + parameters.length === 0 ? (
         <p className="px-4 py-3 text-ink-2">
           No rules yet. A rule is what is known besides the balances: how a splitter splits, what a unit recovers, how
           far a reaction goes.
         </p>
       ) : null}
       <List title="Rules">
-        {rules.map((rule) => (
-          <RuleLine key={rule.id} view={view} desk={desk} rule={rule} />
-        ))}
+        {asText ? [] : rules.map((rule) => <RuleLine key={rule.id} view={view} desk={desk} rule={rule} />)}
       </List>
       <List title="Reactions">
         {reactions.map((reaction) => (
           <ReactionLine key={reaction.id} view={view} desk={desk} reaction={reaction} />
-        ))}
-      </List>
-      <List title="Parameters">
-        {parameters.map((parameter) => (
-          <ParameterLine key={parameter.id} view={view} desk={desk} parameter={parameter} />
         ))}
       </List>
     </div>
