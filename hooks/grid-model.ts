@@ -48,6 +48,8 @@ export type CellView = {
   mark?: 'wrong' | 'flag' | 'broken'
   /** A value stands here that is not used. */
   kept?: 'check' | 'withdrawn' | 'difference'
+  /** How many readings stand here, where more than one. */
+  readings?: number
   /** Why it is marked. */
   description?: string
 }

@@ -33,6 +33,7 @@ class FakePort {
       solution: {} as Solution,
       streams: [],
       components,
+      rows: [],
       leftOut: [],
     }
     this.onmessage?.({ data: message } as MessageEvent<FromSolver>)

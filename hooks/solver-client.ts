@@ -1,7 +1,7 @@
 import { diff } from '@/lib/book/diff'
 import type { CaseId } from '@/lib/book/ids'
 import { type BookState, recordsOf } from '@/lib/book/state'
-import type { SolvedCase, SolverHandle } from './solver-handle'
+import { type SolverHandle, solvedCase } from './solver-handle'
 import type { FromSolver, ToSolver } from './solver-messages'
 
 /** A worker that has not answered for this long is ended and started anew. */
@@ -112,17 +112,5 @@ export class SolverClient {
   private tell(handle: SolverHandle): void {
     this.handle = handle
     for (const listener of this.listeners) listener()
-  }
-}
-
-function solvedCase(message: Extract<FromSolver, { type: 'solved' }>): SolvedCase {
-  const { solution, streams, components, leftOut } = message
-  return {
-    solution,
-    streams,
-    components,
-    leftOut,
-    streamIndex: new Map(streams.map((id, index) => [id, index])),
-    componentIndex: new Map(components.map((id, index) => [id, index])),
   }
 }

@@ -15,6 +15,8 @@ export type FromSolver =
       solution: Solution
       streams: string[]
       components: string[]
+      /** Of `solution.wanted`. */
+      rows: string[]
       leftOut: { id: string; kind: string; what: string }[]
     }
   /** The change did not fit what the worker holds: load the whole book again. */

@@ -22,11 +22,15 @@ self.onmessage = (event: MessageEvent<ToSolver>) => {
 
 function answer({ sequence, caseId }: ToSolver): [FromSolver, Transferable[]] {
   try {
-    const { problem, streams, components, leftOut } = toProblem(state, caseId)
-    const solution = solve(problem)
+    const { problem, streams, components, leftOut, wanted, rows } = toProblem(state, caseId)
+    const solution = solve(problem, wanted)
+    const more = solution.wanted
     return [
-      { type: 'solved', sequence, solution, streams, components, leftOut },
-      [solution.states.buffer, solution.values.buffer, solution.flags.buffer] as Transferable[],
+      { type: 'solved', sequence, solution, streams, components, rows, leftOut },
+      [
+        ...[solution.states, solution.values, solution.flags].map(({ buffer }) => buffer as Transferable),
+        ...(more ? [more.states, more.values, more.flags].map(({ buffer }) => buffer as Transferable) : []),
+      ],
     ]
   } catch (cause) {
     // A bug in the solver must not silence the table: it is told, with what went wrong.

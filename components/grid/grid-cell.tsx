@@ -36,6 +36,7 @@ export type GridCellProps = {
   bold?: boolean | undefined
   mark?: 'wrong' | 'flag' | 'broken' | undefined
   kept?: 'check' | 'withdrawn' | 'difference' | undefined
+  readings?: number | undefined
   description?: string | undefined
   selected: boolean
   tabStop: boolean
@@ -55,6 +56,7 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
       role={props.role}
       data-row={props.row}
       data-column={props.column}
+      data-readings={props.readings}
       aria-colindex={props.columnIndex}
       aria-colspan={props.span}
       aria-label={props.label}

@@ -60,6 +60,7 @@ export const GridRowView = memo(function GridRowView(props: GridRowProps) {
         bold={view.bold}
         mark={view.mark}
         kept={view.kept}
+        readings={view.readings}
         description={view.description}
         selected={index >= props.selectedFrom && index <= props.selectedTo}
         tabStop={index === tabStop}

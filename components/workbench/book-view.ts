@@ -1,11 +1,15 @@
 import type { SolvedCase } from '@/hooks/solver-handle'
-import { type BookUnits, bookUnits } from '@/lib/balance/measure/units-of-measure'
-import type { Diagnostic } from '@/lib/balance/solution'
-import type { CaseId, ComponentId, StreamId } from '@/lib/book/ids'
+import { measureKey } from '@/lib/balance/measure/measure-name'
+import { type BookUnits, bookUnits, parseFractionUnit } from '@/lib/balance/measure/units-of-measure'
+import type { Diagnostic, Place } from '@/lib/balance/solution'
+import type { CaseId, MeasureId, StreamId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
+import { type Measure, measureName, measureTitle } from '@/lib/book/measures'
 import { type BookState, bookOf, inOrder } from '@/lib/book/state'
+import { unitKindOf } from '@/lib/book/units'
+import type { NumberStyle } from '@/lib/sheet/format'
 import type { DecimalSign } from '@/lib/sheet/read-number'
-import { type RowQuantity, rowQuantityOf } from './rows'
+import { type RowPlace, type RowQuantity, rowQuantityOf, rowTitle } from './rows'
 
 type Given = RecordOf<'given'>
 
@@ -25,8 +29,12 @@ export type BookView = {
   streams: readonly RecordOf<'stream'>[]
   components: readonly RecordOf<'component'>[]
   plant: readonly RecordOf<'unit'>[]
+  /** Rows that people added, in order. */
+  measures: readonly Measure[]
+  /** The row of a measure that the solver names by tags. */
+  measureAt: ReadonlyMap<string, MeasureId>
   solved: SolvedCase | null
-  /** Givens of the case by the cell they stand in, the main instrument first. */
+  /** Givens of the case by the cell they stand in: those in use first, and of these the main instrument. */
   givensAt: ReadonlyMap<string, readonly Given[]>
   /** What the solver has to say about a stream or a unit, by record id. */
   streamTroubles: ReadonlyMap<StreamId, readonly Diagnostic[]>
@@ -35,8 +43,12 @@ export type BookView = {
   leftOut: ReadonlyMap<string, string>
 }
 
-export const cellKey = (stream: StreamId, quantity: RowQuantity, component: ComponentId | null): string =>
-  `${stream}|${quantity}|${component ?? ''}`
+export const cellKey = (stream: StreamId, { quantity, componentId, measureId }: RowPlace): string =>
+  `${stream}|${quantity}|${componentId ?? measureId ?? ''}`
+
+/** The solver shows the first of these, so the table does too. */
+const displayRank = ({ use, instrument }: Given): string =>
+  `${use === 'given' ? 0 : 1}${instrument === 'main' ? '' : `~${instrument}`}`
 
 export function bookView(
   state: BookState,
@@ -50,12 +62,18 @@ export function bookView(
   const givensAt = new Map<string, Given[]>()
   for (const given of state.given.values()) {
     if (given.caseId !== caseId) continue
-    const quantity = rowQuantityOf(given.quantity, book.basis)
-    const key = cellKey(given.streamId, quantity, given.componentId)
+    const key = cellKey(given.streamId, rowOfGiven(given, book.basis))
     const list = givensAt.get(key)
-    if (!list) givensAt.set(key, [given])
-    else if (given.instrument === 'main') list.unshift(given)
-    else list.push(given)
+    if (list) list.push(given)
+    else givensAt.set(key, [given])
+  }
+  for (const list of givensAt.values())
+    if (list.length > 1) list.sort((a, b) => (displayRank(a) < displayRank(b) ? -1 : 1))
+  const measures = inOrder(state.measure)
+  const measureAt = new Map<string, MeasureId>()
+  for (const measure of measures) {
+    const name = measureName(state, measure)
+    if (typeof name !== 'string') measureAt.set(measureKey(name), measure.id)
   }
   const streams = inOrder(state.stream)
   const plant = inOrder(state.unit)
@@ -85,6 +103,8 @@ export function bookView(
     streams,
     components: inOrder(state.component),
     plant,
+    measures,
+    measureAt,
     solved,
     givensAt,
     streamTroubles,
@@ -93,11 +113,42 @@ export function bookView(
   }
 }
 
+/** The row that a given stands in. */
+export const rowOfGiven = (
+  { quantity, componentId, measureId = null }: Pick<Given, 'quantity' | 'componentId' | 'measureId'>,
+  basis: RecordOf<'book'>['basis'],
+): RowPlace => ({ quantity: rowQuantityOf(quantity, basis), componentId, measureId })
+
+/** The row of a place that the solver names by tags; null where the book no longer has it. */
+export function rowOfPlace(view: BookView, place: Place): RowPlace | null {
+  const quantity = rowQuantityOf(place.quantity, view.book.basis)
+  if (quantity === 'measure') {
+    const measureId = view.measureAt.get(measureKey(place))
+    return measureId === undefined ? null : { quantity, componentId: null, measureId }
+  }
+  if (place.component === undefined) return { quantity, componentId: null, measureId: null }
+  const component = view.components.find(({ tag }) => tag.trim() === place.component)
+  return component ? { quantity, componentId: component.id, measureId: null } : null
+}
+
+export const isSameRow = (a: RowPlace, b: RowPlace): boolean =>
+  a.quantity === b.quantity && a.componentId === b.componentId && a.measureId === b.measureId
+
+export const measureOfRow = (view: BookView, { measureId }: RowPlace): Measure | undefined =>
+  measureId === null ? undefined : view.state.measure.get(measureId)
+
+/** What the values of a row are: "Mass fraction", "Volume flow", or what the row of a measure is called. */
+export function titleOfRow(view: BookView, row: RowPlace): string {
+  const measure = measureOfRow(view, row)
+  if (measure) return measureTitle(view.state, measure)
+  return rowTitle(row.quantity, view.book.basis)
+}
+
 /** The unit that a row shows its values in, as written for people and as the solver's units know it. */
-export function rowUnit(view: BookView, quantity: RowQuantity): { shown: string; symbol: string } {
+export function rowUnit(view: BookView, row: RowPlace): { shown: string; symbol: string } {
   const { basis, flowUnit } = view.book
   const ownIsMass = basis === 'mass'
-  switch (quantity) {
+  switch (row.quantity) {
     case 'flow':
     case 'componentFlow':
       return { shown: flowUnit, symbol: flowUnit }
@@ -109,6 +160,13 @@ export function rowUnit(view: BookView, quantity: RowQuantity): { shown: string;
       const symbol = view.units?.volume.symbol ?? ''
       return { shown: symbol.replace('m3', 'm³'), symbol }
     }
+    case 'measure': {
+      const measure = measureOfRow(view, row)
+      if (!measure) return { shown: '', symbol: '1' }
+      const ofMass = unitKindOf(measure.quantity, basis) === 'massFraction'
+      const words: Record<string, string> = ofMass ? { 1: 'kg/kg', '%': 'wt %' } : { 1: 'mol/mol', '%': 'mol %' }
+      return { shown: words[measure.unit] ?? measure.unit, symbol: measure.unit }
+    }
     default: {
       const symbol = (ownIsMass ? view.units?.mole : view.units?.mass)?.symbol ?? ''
       return { shown: symbol, symbol }
@@ -117,3 +175,12 @@ export function rowUnit(view: BookView, quantity: RowQuantity): { shown: string;
 }
 
 export const isFraction = (quantity: RowQuantity): boolean => quantity === 'fraction' || quantity === 'otherFraction'
+
+/** How many of the row's unit make the solver's: 100 for %, 1 for flows. */
+export const rowScale = (view: BookView, row: RowPlace): number =>
+  isFraction(row.quantity) || row.quantity === 'measure'
+    ? 1 / (parseFractionUnit(rowUnit(view, row).symbol)?.factor ?? 1)
+    : 1
+
+export const rowStyle = (view: BookView, row: RowPlace): NumberStyle =>
+  isFraction(row.quantity) || measureOfRow(view, row)?.unit === '%' ? 'percent' : 'flow'

@@ -1,12 +1,13 @@
 import { CellFlag, CellState, slotOf } from '@/lib/balance/solution'
-import { absenceId, type ComponentId, type StreamId } from '@/lib/book/ids'
+import { absenceId, type StreamId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 import { bookUnitOf, convert } from '@/lib/book/units'
 
 import { entryMeasure, readEntry } from '@/lib/sheet/entry'
 import { formatNumber } from '@/lib/sheet/format'
-import { type BookView, cellKey, isFraction, rowUnit } from './book-view'
-import type { RowQuantity } from './rows'
+import { type BookView, cellKey, isFraction, measureOfRow, rowScale, rowStyle, rowUnit } from './book-view'
+import { whyNoMeasure } from './measure-reading'
+import type { RowPlace } from './rows'
 
 export type ReadState = 'given' | 'solvable' | 'unknown' | 'atOdds' | 'absent' | 'wrong' | 'missing'
 
@@ -30,13 +31,13 @@ export type Reading = {
 /** Half a unit in the last typed digit, and the value, in the row's unit. */
 function inRow(
   view: BookView,
-  quantity: RowQuantity,
+  row: RowPlace,
   given: RecordOf<'given'>,
 ): { value: number; halfWidth: number | null } | null {
   if (given.value === null) return null
   const { basis, flowUnit } = view.book
   const from = given.unit ?? bookUnitOf(given.quantity, basis, flowUnit)
-  const to = rowUnit(view, quantity).symbol
+  const to = rowUnit(view, row).symbol
   if (from === to) return { value: given.value, halfWidth: given.halfWidth }
   const value = from === undefined ? undefined : convert(given.value, from, to)
   if (from === undefined || value === undefined) return null
@@ -44,36 +45,46 @@ function inRow(
   return { value: Number(value.toPrecision(14)), halfWidth }
 }
 
+/** What the solver found for a cell, in its own units. */
+type Found = { state: CellState; value: number; flags: number; slot: number | null }
+
+function foundAt({ solved }: BookView, streamId: StreamId, row: RowPlace): Found {
+  const nothing: Found = { state: CellState.unknown, value: Number.NaN, flags: 0, slot: null }
+  const stream = solved?.streamIndex.get(streamId)
+  if (!solved || stream === undefined) return nothing
+  const { solution } = solved
+  const { quantity, componentId } = row
+  if (quantity === 'measure' || quantity === 'volumeFlow') {
+    const index = solved.rowIndex.get(row.measureId ?? quantity)
+    if (index === undefined || !solution.wanted) return nothing
+    const { states, values, flags } = solution.wanted
+    const at = index * solution.nStreams + stream
+    return { state: states[at] as CellState, value: values[at] as number, flags: flags[at] ?? 0, slot: null }
+  }
+  const component = componentId === null ? 0 : solved.componentIndex.get(componentId)
+  if (component === undefined) return nothing
+  const slot = slotOf(solution.nComponents, stream, quantity, component)
+  const { states, values, flags } = solution
+  return { state: states[slot] as CellState, value: values[slot] ?? Number.NaN, flags: flags[slot] ?? 0, slot }
+}
+
 /** The cell of a stream: what is typed there comes first, then what the solver found. */
-export function readCell(
-  view: BookView,
-  streamId: StreamId,
-  quantity: RowQuantity,
-  componentId: ComponentId | null,
-): Reading {
-  const { solved, state } = view
-  const list = view.givensAt.get(cellKey(streamId, quantity, componentId)) ?? []
+export function readCell(view: BookView, streamId: StreamId, row: RowPlace): Reading {
+  const { state } = view
+  const { quantity, componentId } = row
+  const list = view.givensAt.get(cellKey(streamId, row)) ?? []
   const given = list[0] ?? null
   const others = list.slice(1)
   const kept = given && given.use !== 'given' ? given.use : null
   const nothing: Reading = { state: 'unknown', value: null, given, kept, others, flags: 0, slot: null, reason: null }
   if (componentId !== null && state.absence.has(absenceId(streamId, componentId)))
     return { ...nothing, state: 'absent', reason: given ? (view.leftOut.get(given.id) ?? null) : null }
-  if (quantity === 'volumeFlow') return readVolume(view, streamId, nothing)
-  const stream = solved?.streamIndex.get(streamId)
-  const component = componentId === null ? 0 : solved?.componentIndex.get(componentId)
-  const slot =
-    solved && stream !== undefined && component !== undefined
-      ? slotOf(solved.solution.nComponents, stream, quantity, component)
-      : null
-  const found = slot === null || !solved ? CellState.unknown : (solved.solution.states[slot] as CellState)
-  const flags = slot === null || !solved ? 0 : (solved.solution.flags[slot] ?? 0)
-  const raw = slot === null || !solved ? Number.NaN : (solved.solution.values[slot] ?? Number.NaN)
-  const computed = Number.isNaN(raw) ? null : isFraction(quantity) ? raw * 100 : raw
+  const { state: found, value: raw, flags, slot } = foundAt(view, streamId, row)
+  const computed = Number.isNaN(raw) ? null : raw * rowScale(view, row)
   if (given && given.value === null)
-    return { ...nothing, state: 'wrong', flags, slot, reason: reasonOf(view, quantity, given) }
+    return { ...nothing, state: 'wrong', flags, slot, reason: reasonOf(view, row, given) }
   if (given && given.use === 'given') {
-    const typed = inRow(view, quantity, given)
+    const typed = inRow(view, row, given)
     if (!isTaken(found) && isByDifference(view, streamId, quantity, componentId)) {
       const here = found === CellState.solvable ? { state: 'solvable' as const, value: computed, flags } : {}
       return { ...nothing, ...here, kept: 'difference', slot }
@@ -93,6 +104,8 @@ export function readCell(
   if (found === CellState.solvable || (found === CellState.given && others.some(({ use }) => use === 'given')))
     return { ...nothing, state: 'solvable', value: computed, flags, slot }
   if (found === CellState.atOdds) return { ...nothing, state: 'atOdds', value: computed, flags, slot }
+  const why = quantity === 'volumeFlow' || quantity === 'measure' ? whyNoMeasure(view, streamId, row) : null
+  if (why) return { ...nothing, ...why, slot }
   if (found === CellState.absent && quantity.startsWith('other'))
     return { ...nothing, state: 'missing', slot, reason: 'A molar mass is missing' }
   return { ...nothing, state: 'unknown', slot }
@@ -102,58 +115,44 @@ export function readCell(
 function isByDifference(
   view: BookView,
   streamId: StreamId,
-  quantity: RowQuantity,
+  quantity: RowPlace['quantity'],
   componentId: string | null,
 ): boolean {
   const stream = view.state.stream.get(streamId)
   return isFraction(quantity) && stream?.fractions === 'difference' && stream.differenceComponentId === componentId
 }
 
-/** A volume flow: typed, or mass over density where both are known. It is no cell of the solver's arrays. */
-function readVolume(view: BookView, streamId: StreamId, nothing: Reading): Reading {
-  const { given } = nothing
-  if (given && given.use === 'given') {
-    const refused = given.value === null ? reasonOf(view, 'volumeFlow', given) : view.leftOut.get(given.id)
-    if (refused !== undefined) return { ...nothing, state: 'wrong', reason: refused }
-    return { ...nothing, state: 'given', value: inRow(view, 'volumeFlow', given)?.value ?? null }
-  }
-  const density = view.state.stream.get(streamId)?.density ?? null
-  if (density === null) return { ...nothing, state: 'missing', reason: 'The density of the stream is not known.' }
-  const mass = readCell(view, streamId, view.book.basis === 'mass' ? 'flow' : 'otherFlow', null)
-  const kilograms = mass.value === null || !view.units ? null : mass.value * view.units.mass.factor
-  return kilograms === null ? nothing : { ...nothing, state: 'solvable', value: kilograms / density, flags: mass.flags }
-}
-
 /** The newest answer counts the given of this cell as given, so it was taken, whatever an older list says. */
 const isTaken = (found: CellState): boolean => found === CellState.given || found === CellState.atOdds
 
-function reasonOf(view: BookView, quantity: RowQuantity, given: RecordOf<'given'>): string {
+function reasonOf(view: BookView, row: RowPlace, given: RecordOf<'given'>): string {
   const entry = readEntry(given.text, {
     measure: entryMeasure(given.quantity, view.book.basis),
-    unit: rowUnit(view, quantity).symbol,
+    unit: rowUnit(view, row).symbol,
     decimal: view.decimal,
   })
   return entry.ok ? `“${given.text}” could not be read when it was typed: type it again.` : entry.reason
 }
 
 /** The number as the row prints it. */
-export function shownNumber(view: BookView, quantity: RowQuantity, reading: Reading, extraDigits = 0): string {
+export function shownNumber(view: BookView, row: RowPlace, reading: Reading, extraDigits = 0): string {
   if (reading.value === null) return ''
   const { decimal } = view
-  const style = isFraction(quantity) ? 'percent' : 'flow'
+  const style = rowStyle(view, row)
   if (reading.given && (reading.state === 'given' || reading.state === 'atOdds')) {
-    const typed = inRow(view, quantity, reading.given)
+    const typed = inRow(view, row, reading.given)
     return formatNumber(reading.value, style, { decimal, typed: true, halfWidth: typed?.halfWidth ?? null })
   }
-  const digits = isFraction(quantity) ? view.digits.fraction : view.digits.flow
+  const isRatio = isFraction(row.quantity) || measureOfRow(view, row) !== undefined
+  const digits = isRatio ? view.digits.fraction : view.digits.flow
   return formatNumber(reading.value, style, { decimal, digits, extraDigits })
 }
 
 /** What was typed, as the row prints it, also where it is not used; null where it is no number. */
-export function typedNumber(view: BookView, quantity: RowQuantity, given: RecordOf<'given'>): string | null {
-  const typed = inRow(view, quantity, given)
+export function typedNumber(view: BookView, row: RowPlace, given: RecordOf<'given'>): string | null {
+  const typed = inRow(view, row, given)
   if (!typed) return null
-  const style = isFraction(quantity) ? 'percent' : 'flow'
+  const style = rowStyle(view, row)
   return formatNumber(typed.value, style, { decimal: view.decimal, typed: true, halfWidth: typed.halfWidth })
 }
 

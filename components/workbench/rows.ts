@@ -1,31 +1,39 @@
+import { cellQuantityOn, quantityOn } from '@/lib/balance/measure/cell-quantity'
 import type { CellQuantity } from '@/lib/balance/solution'
-import type { ComponentId } from '@/lib/book/ids'
+import type { ComponentId, MeasureId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 
 /** The sections of the stream table under its total. */
-export type SectionKey = 'fraction' | 'componentFlow' | 'otherFraction' | 'otherComponentFlow' | 'carried'
+export type SectionKey = 'fraction' | 'componentFlow' | 'otherFraction' | 'otherComponentFlow' | 'measures' | 'carried'
 
 export type StreamField = 'tag' | 'name' | 'from' | 'to' | 'phase' | 'density' | 'temperature' | 'pressure'
 
-/** What a row of values shows: a cell of the solver's arrays, or the volume flow that follows from a density. */
-export type RowQuantity = CellQuantity | 'volumeFlow'
+/** What a row of values shows: a cell of the solver's arrays, the volume flow by density, or a measure that people added. */
+export type RowQuantity = CellQuantity | 'volumeFlow' | 'measure'
+
+/** Which row a value stands in. */
+export type RowPlace = { quantity: RowQuantity; componentId: ComponentId | null; measureId: MeasureId | null }
 
 /** What a row of the stream table shows. Its id is written from it, so that an id can be read back. */
 export type RowRef =
   | { kind: 'field'; field: StreamField }
   | { kind: 'section'; section: SectionKey }
-  | { kind: 'value'; quantity: RowQuantity; componentId: ComponentId | null }
+  | ({ kind: 'value' } & RowPlace)
 
 const fields: readonly StreamField[] = ['tag', 'name', 'from', 'to', 'phase', 'density', 'temperature', 'pressure']
 
 export const valueRow = (quantity: RowQuantity, componentId: ComponentId | null = null): string =>
   `value/${quantity}/${componentId ?? ''}`
+export const measureRow = (id: MeasureId): string => `value/measure/${id}`
+export const rowIdOf = ({ quantity, componentId, measureId }: RowPlace): string =>
+  measureId === null ? valueRow(quantity, componentId) : measureRow(measureId)
 export const sectionRow = (section: SectionKey): string => `section/${section}`
 
 export function readRow(id: string): RowRef | null {
-  const [kind, what = '', componentId = ''] = id.split('/')
+  const [kind, what = '', of = ''] = id.split('/')
   if (kind === 'section') return { kind, section: what as SectionKey }
-  if (kind === 'value') return { kind, quantity: what as RowQuantity, componentId: componentId || null }
+  if (kind === 'value' && what === 'measure') return { kind, quantity: what, componentId: null, measureId: of }
+  if (kind === 'value') return { kind, quantity: what as RowQuantity, componentId: of || null, measureId: null }
   const field = fields.find((name) => name === id)
   return field ? { kind: 'field', field } : null
 }
@@ -35,6 +43,7 @@ export function sectionOf(row: string): SectionKey | null {
   const ref = readRow(row)
   if (ref?.kind !== 'value' || ref.quantity === 'flow') return null
   if (ref.quantity === 'otherFlow') return 'otherComponentFlow'
+  if (ref.quantity === 'measure') return 'measures'
   return ref.quantity === 'volumeFlow' ? 'carried' : ref.quantity
 }
 
@@ -42,48 +51,13 @@ type Given = RecordOf<'given'>
 export type Quantity = Given['quantity']
 type Basis = RecordOf<'book'>['basis']
 
-/** The quantity that a value typed into a row is kept as. */
-export function quantityOf(quantity: RowQuantity, basis: Basis): Quantity {
-  const mass = basis === 'mass'
-  switch (quantity) {
-    case 'flow':
-    case 'componentFlow':
-    case 'volumeFlow':
-      return quantity
-    case 'fraction':
-      return mass ? 'massFraction' : 'moleFraction'
-    case 'otherFlow':
-      return mass ? 'moleFlow' : 'massFlow'
-    case 'otherComponentFlow':
-      return mass ? 'componentMoleFlow' : 'componentMassFlow'
-    case 'otherFraction':
-      return mass ? 'moleFraction' : 'massFraction'
-  }
-}
+/** The quantity that a value typed into a row is kept as; a row of a measure says its own. */
+export const quantityOf = (quantity: Exclude<RowQuantity, 'measure'>, basis: Basis): Quantity =>
+  quantity === 'volumeFlow' ? quantity : quantityOn(basis, quantity)
 
 /** The row that a given stands in. */
-export function rowQuantityOf(quantity: Quantity, basis: Basis): RowQuantity {
-  const mass = basis === 'mass'
-  switch (quantity) {
-    case 'flow':
-    case 'componentFlow':
-      return quantity
-    case 'massFlow':
-      return mass ? 'flow' : 'otherFlow'
-    case 'moleFlow':
-      return mass ? 'otherFlow' : 'flow'
-    case 'componentMassFlow':
-      return mass ? 'componentFlow' : 'otherComponentFlow'
-    case 'componentMoleFlow':
-      return mass ? 'otherComponentFlow' : 'componentFlow'
-    case 'massFraction':
-      return mass ? 'fraction' : 'otherFraction'
-    case 'moleFraction':
-      return mass ? 'otherFraction' : 'fraction'
-    case 'volumeFlow':
-      return quantity
-  }
-}
+export const rowQuantityOf = (quantity: Quantity, basis: Basis): RowQuantity =>
+  quantity === 'volumeFlow' ? quantity : (cellQuantityOn(basis, quantity) ?? 'measure')
 
 /** Heads as reports print them. */
 export function rowTitle(quantity: RowQuantity, basis: Basis): string {
@@ -103,6 +77,8 @@ export function rowTitle(quantity: RowQuantity, basis: Basis): string {
       return `${other} fraction`
     case 'volumeFlow':
       return 'Volume flow'
+    case 'measure':
+      return 'Measure'
   }
 }
 

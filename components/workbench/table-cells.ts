@@ -3,7 +3,8 @@ import { NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
 import { CellState } from '@/lib/balance/solution'
 import { linkId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
-import { type BookView, rowUnit } from './book-view'
+import { measureKinds } from '@/lib/book/measures'
+import { type BookView, measureOfRow, rowUnit, titleOfRow } from './book-view'
 import {
   flagWords,
   isDoubtful,
@@ -17,6 +18,8 @@ import {
 import { fractionChoice } from './odds/fraction-choice'
 import {
   fieldTitle,
+  measureRow,
+  type RowPlace,
   type RowQuantity,
   type RowRef,
   readRow,
@@ -50,6 +53,8 @@ export function tableRows(view: BookView, open: ReadonlySet<SectionKey>): GridRo
       section('otherComponentFlow', () => [{ id: valueRow('otherFlow'), size: 27 }, ...each('otherComponentFlow')()])
     }
   }
+  if (view.measures.length > 0)
+    section('measures', () => view.measures.map(({ id }) => ({ id: measureRow(id), size: 27 })))
   section('carried', () =>
     ['phase', 'density', valueRow('volumeFlow'), 'temperature', 'pressure'].map((id) => ({ id, size: 25 })),
   )
@@ -75,7 +80,7 @@ export function tableCell(view: BookView, place: GridPlace): CellView {
   if (!stream) return { text: '', label: '', tone: 'plain' }
   if (ref.kind === 'field') return fieldCell(view, ref.field, stream)
   if (ref.kind === 'section') return { text: '', label: '', tone: 'plain' }
-  return valueCell(view, stream, ref.quantity, ref.componentId)
+  return valueCell(view, stream, ref)
 }
 
 function headCell(view: BookView, ref: RowRef): CellView {
@@ -95,10 +100,15 @@ function headCell(view: BookView, ref: RowRef): CellView {
     }
   }
   if (ref.kind === 'section') {
-    const text = ref.section === 'carried' ? 'Carried notes' : rowTitle(ref.section, view.book.basis)
+    const text = sectionTitle(view, ref.section)
     return { text, label: `${text}, section`, tone: 'section' }
   }
   const { quantity, componentId } = ref
+  const measure = measureOfRow(view, ref)
+  if (measure) {
+    const text = titleOfRow(view, ref)
+    return { text, label: `${text}, ${measureKinds[measure.quantity].toLowerCase()}`, tone: 'label' }
+  }
   if (componentId === null) {
     const text = rowTitle(quantity, view.book.basis)
     return { text, label: text, tone: 'total', bold: quantity === 'flow' }
@@ -110,13 +120,14 @@ function headCell(view: BookView, ref: RowRef): CellView {
   return { text, label, tone: 'label', ...(aside === undefined ? {} : { aside }) }
 }
 
+function sectionTitle(view: BookView, section: SectionKey): string {
+  if (section === 'carried') return 'Carried notes'
+  return section === 'measures' ? 'Further measures' : rowTitle(section, view.book.basis)
+}
+
 function unitCell(view: BookView, ref: RowRef): CellView {
   const shown =
-    ref.kind === 'value'
-      ? rowUnit(view, ref.quantity).shown
-      : ref.kind === 'field' && ref.field === 'density'
-        ? 'kg/m³'
-        : ''
+    ref.kind === 'value' ? rowUnit(view, ref).shown : ref.kind === 'field' && ref.field === 'density' ? 'kg/m³' : ''
   const isEnd = ref.kind === 'field' && (ref.field === 'from' || ref.field === 'to')
   return { text: shown, label: shown === '' ? 'No unit' : `Unit: ${shown}`, tone: isEnd ? 'end' : 'kind' }
 }
@@ -159,16 +170,12 @@ const toneOf: Record<ReadState, CellTone> = {
   missing: 'absent',
 }
 
-function valueCell(
-  view: BookView,
-  stream: RecordOf<'stream'>,
-  quantity: RowQuantity,
-  componentId: string | null,
-): CellView {
-  const reading = readCell(view, stream.id, quantity, componentId)
-  const { shown } = rowUnit(view, quantity)
+function valueCell(view: BookView, stream: RecordOf<'stream'>, row: RowPlace): CellView {
+  const { quantity, componentId } = row
+  const reading = readCell(view, stream.id, row)
+  const { shown } = rowUnit(view, row)
   const component = componentId === null ? null : view.state.component.get(componentId)
-  const title = rowTitle(quantity, view.book.basis)
+  const title = titleOfRow(view, row)
   const what = component ? `${title} of ${component.name || component.tag}` : title
   const state = stateWords[reading.state]
   const where = `${what}, stream ${stream.tag}`
@@ -177,19 +184,22 @@ function valueCell(
     const cell = { text: typed, tone: 'plain' as const, mark: 'wrong' as const, description: reading.reason ?? '' }
     return { ...cell, label: `${where}: “${typed}”, ${state}` }
   }
-  const number = shownNumber(view, quantity, reading)
+  const number = shownNumber(view, row, reading)
   const words = flagWords(reading.flags)
   const text = number !== '' ? number : reading.state === 'absent' ? '–' : reading.state === 'missing' ? '' : '·'
-  const typed = reading.given && reading.kept ? typedNumber(view, quantity, reading.given) : null
+  const typed = reading.given && reading.kept ? typedNumber(view, row, reading.given) : null
   // A value that stands but is not used is told after the one that holds.
   const aside = reading.kept
     ? `; typed ${typed === null ? `“${reading.given?.text}”` : `${typed} ${shown}`}, ${keptWords[reading.kept]}`
     : ''
   const keptHint = aside === '' ? '' : `Not used: ${aside.slice(2)}.`
+  const count = reading.others.length + (reading.given ? 1 : 0)
+  const several = count > 1 ? `, ${count} readings` : ''
   const description = [reading.reason ?? '', keptHint, ...words].filter(Boolean).join(' ')
   return {
     text,
-    label: `${number === '' ? `${where}: ${state}` : `${where}: ${number} ${shown}, ${state}`}${aside}`,
+    label: `${number === '' ? `${where}: ${state}` : `${where}: ${number} ${shown}, ${state}`}${aside}${several}`,
+    ...(count > 1 ? { readings: count } : {}),
     tone: toneOf[reading.state],
     ...(reading.kept === null ? {} : { kept: reading.kept }),
     bold: quantity === 'flow',

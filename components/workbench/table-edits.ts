@@ -8,24 +8,43 @@ import { absenceId, linkId, newId, type StreamId } from '@/lib/book/ids'
 import type { BookState } from '@/lib/book/state'
 import { entryMeasure, readEntry, typedOf } from '@/lib/sheet/entry'
 import { type DecimalSign, readNumber } from '@/lib/sheet/read-number'
-import { type BookView, cellKey, rowUnit } from './book-view'
+import { type BookView, cellKey, measureOfRow, rowUnit } from './book-view'
 import { quantityOf, readRow, type StreamField } from './rows'
 
-/** What stands typed in a value cell, read by its row; `as`: the decimal sign of a block that knows its own. */
-export function readTyped(view: BookView, place: GridPlace, text: string, as?: DecimalSign): GivenCell | null {
+/** What stands typed in a value cell, read by its row; `as`: the decimal sign of a block that knows its own; `meter`: which reading. */
+export function readTyped(
+  view: BookView,
+  place: GridPlace,
+  text: string,
+  as?: DecimalSign,
+  meter?: string,
+): GivenCell | null {
   const ref = readRow(place.row)
   if (ref?.kind !== 'value' || place.column === NAME_COLUMN || place.column === UNIT_COLUMN) return null
   // A value that stands here under the other name of its quantity stays there: massFlow is flow in a mass book.
-  const standing = view.givensAt.get(cellKey(place.column, ref.quantity, ref.componentId))?.[0]
-  const quantity = standing?.quantity ?? quantityOf(ref.quantity, view.book.basis)
+  const list = view.givensAt.get(cellKey(place.column, ref)) ?? []
+  const standing = meter === undefined ? list[0] : list.find(({ instrument }) => instrument === meter)
+  const measure = measureOfRow(view, ref)
+  if (ref.quantity === 'measure' && !measure) return null
+  const plain = ref.quantity === 'measure' ? null : quantityOf(ref.quantity, view.book.basis)
+  const quantity = standing?.quantity ?? measure?.quantity ?? plain
+  if (quantity === null) return null
   const entry = readEntry(text, {
     measure: entryMeasure(quantity, view.book.basis),
-    unit: rowUnit(view, ref.quantity).symbol,
+    unit: rowUnit(view, ref).symbol,
     decimal: as ?? view.decimal,
   })
-  const instrument = standing?.instrument ?? 'main'
-  const { caseId } = view
-  return { caseId, streamId: place.column, quantity, componentId: ref.componentId, instrument, typed: typedOf(entry) }
+  const instrument = meter ?? standing?.instrument ?? 'main'
+  const { componentId, measureId } = ref
+  return {
+    caseId: view.caseId,
+    streamId: place.column,
+    quantity,
+    componentId,
+    measureId,
+    instrument,
+    typed: typedOf(entry),
+  }
 }
 
 /** A value that would stand where its component cannot be. */
@@ -87,8 +106,7 @@ export function clearRange(view: BookView, range: GridRange): Edit {
         if (ref.field !== 'tag') steps.push((state) => setStreamField(state, column, ref.field, '', view.decimal))
         continue
       }
-      for (const given of view.givensAt.get(cellKey(column, ref.quantity, ref.componentId)) ?? [])
-        places.push({ ...given, typed: null })
+      for (const given of view.givensAt.get(cellKey(column, ref)) ?? []) places.push({ ...given, typed: null })
     }
   }
   if (steps.length === 0) return clearGivens(view.state, places, newId)

@@ -22,7 +22,7 @@ function copyText(view: BookView, place: GridPlace): string {
   const ref = readRow(place.row)
   if (ref?.kind !== 'value' || place.column === NAME_COLUMN || place.column === UNIT_COLUMN)
     return tableCell(view, place).text
-  const reading = readCell(view, place.column, ref.quantity, ref.componentId)
+  const reading = readCell(view, place.column, ref)
   if (reading.state === 'wrong') return reading.given?.text ?? ''
   return reading.value === null ? '' : plainNumber(reading.value, view.decimal)
 }

@@ -2,12 +2,14 @@ import { ASKED, type GridPlace, type GridRow, type GridSource, NAME_COLUMN, UNIT
 import { together } from '@/lib/book/edits/draft'
 import { moveAfter, setFields } from '@/lib/book/edits/fields'
 import { setGivens } from '@/lib/book/edits/givens'
+import { updateMeasure } from '@/lib/book/edits/measures'
 import { setPresence } from '@/lib/book/edits/presence'
 import { newId } from '@/lib/book/ids'
+import { unitKindOf, unitsFor } from '@/lib/book/units'
 import type { Selection } from '@/lib/sheet/selection'
-import { type BookView, cellKey, rowUnit } from './book-view'
+import { type BookView, cellKey, measureOfRow, rowUnit, titleOfRow } from './book-view'
 import type { Desk } from './desk'
-import { readRow, type SectionKey } from './rows'
+import { type RowRef, readRow, type SectionKey } from './rows'
 import { tableCell } from './table-cells'
 import { clearRange, isAbsentThere, readTyped, setStreamField } from './table-edits'
 import { copyBlock, pasteBlock, readBlock } from './table-paste'
@@ -30,7 +32,7 @@ export function tableSource({ view, rows, desk, toggle }: TableInput): GridSourc
     mayEdit: (place) => view.mayEdit && isTypedInto(place),
     isReadOnly: (place) => !view.mayEdit || !isTypedInto(place),
     editText: (place) => editText(view, place),
-    suggestions: ({ row }) => (row === 'from' || row === 'to' ? view.plant.map(({ tag }) => tag) : []),
+    suggestions: (place) => suggestions(view, place),
     commit: (place, text) => commit(view, desk, place, text),
     clear: (range) => {
       if (view.mayEdit) desk.tryRun(clearRange(view, range))
@@ -74,22 +76,37 @@ export function tableSource({ view, rows, desk, toggle }: TableInput): GridSourc
 
 function isTypedInto(place: GridPlace): boolean {
   const ref = readRow(place.row)
-  if (!ref || ref.kind === 'section' || place.column === UNIT_COLUMN) return false
-  return place.column !== NAME_COLUMN || (ref.kind === 'value' && ref.componentId !== null)
+  if (!ref || ref.kind === 'section') return false
+  const isMeasure = ref.kind === 'value' && ref.measureId !== null
+  if (place.column === UNIT_COLUMN) return isMeasure
+  return place.column !== NAME_COLUMN || isMeasure || (ref.kind === 'value' && ref.componentId !== null)
+}
+
+function suggestions(view: BookView, { row, column }: GridPlace): readonly string[] {
+  if (row === 'from' || row === 'to') return view.plant.map(({ tag }) => tag)
+  const ref = readRow(row)
+  const measure = ref?.kind === 'value' && column === UNIT_COLUMN ? measureOfRow(view, ref) : undefined
+  return measure ? unitsFor(unitKindOf(measure.quantity, view.book.basis)) : []
 }
 
 function editText(view: BookView, place: GridPlace): string {
   const ref = readRow(place.row)
   if (ref?.kind !== 'value') return tableCell(view, place).text
-  if (place.column === NAME_COLUMN) return tableCell(view, place).text
+  const measure = measureOfRow(view, ref)
+  if (place.column === UNIT_COLUMN) return measure?.unit ?? ''
+  if (place.column === NAME_COLUMN) return measure?.name ?? tableCell(view, place).text
   // What follows from the rest is not put into the editor: Enter twice must not turn it into a given.
-  return view.givensAt.get(cellKey(place.column, ref.quantity, ref.componentId))?.[0]?.text ?? ''
+  return view.givensAt.get(cellKey(place.column, ref))?.[0]?.text ?? ''
 }
 
 function commit(view: BookView, desk: Desk, place: GridPlace, text: string): string | typeof ASKED | null {
   const { state } = view
   const ref = readRow(place.row)
   if (!ref || ref.kind === 'section' || text === editText(view, place)) return null
+  const measure = ref.kind === 'value' ? measureOfRow(view, ref) : undefined
+  if (measure && place.column === NAME_COLUMN) return desk.run(updateMeasure(state, measure.id, { name: text }, newId))
+  if (measure && place.column === UNIT_COLUMN)
+    return desk.run(updateMeasure(state, measure.id, { unit: text.trim() || '1' }, newId))
   if (place.column === NAME_COLUMN) {
     if (ref.kind !== 'value' || ref.componentId === null) return null
     return desk.run(setFields(state, 'component', ref.componentId, { name: text.trim() }, newId))
@@ -126,11 +143,15 @@ function labelFor(view: BookView, place: GridPlace, text: string): string {
   const ref = readRow(place.row)
   const stream = view.state.stream.get(place.column)?.tag ?? ''
   if (ref?.kind !== 'value') return `Stream ${stream}`
-  const component = ref.componentId === null ? undefined : view.state.component.get(ref.componentId)
-  const what = component ? component.name || component.tag : 'Total flow'
+  const what = whatOf(view, ref)
   const typed = text.trim()
   if (typed === '') return `${what} in ${stream}: cleared`
-  return `${what} in ${stream}: ${/[a-z%]/i.test(typed) ? typed : `${typed} ${rowUnit(view, ref.quantity).shown}`}`
+  return `${what} in ${stream}: ${/[a-z%]/i.test(typed) ? typed : `${typed} ${rowUnit(view, ref).shown}`}`
+}
+
+function whatOf(view: BookView, ref: Extract<RowRef, { kind: 'value' }>): string {
+  const component = ref.componentId === null ? undefined : view.state.component.get(ref.componentId)
+  return component ? component.name || component.tag : titleOfRow(view, ref)
 }
 
 /** The record to follow after moving by `step` in the list; undefined: there is no further. */

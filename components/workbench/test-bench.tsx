@@ -3,7 +3,7 @@ import userEvent from '@testing-library/user-event'
 import { useMemo } from 'react'
 import { vi } from 'vitest'
 import type { BookHandle } from '@/hooks/book-handle'
-import type { SolverHandle } from '@/hooks/solver-handle'
+import { type SolverHandle, solvedCase } from '@/hooks/solver-handle'
 import { useLocalBook } from '@/hooks/use-local-book'
 import { solve } from '@/lib/balance'
 import { fromProblem } from '@/lib/book/from-problem'
@@ -25,15 +25,8 @@ export function saltRecords(): BookRecord[] {
 /** The real solver, at once and in the same thread: happy-dom has no workers. */
 function useSolverHere(state: BookState, caseId: string): SolverHandle {
   return useMemo(() => {
-    const { problem, streams, components, leftOut } = toProblem(state, caseId)
-    const solved = {
-      solution: solve(problem),
-      streams,
-      components,
-      leftOut,
-      streamIndex: new Map(streams.map((id, index) => [id, index])),
-      componentIndex: new Map(components.map((id, index) => [id, index])),
-    }
+    const { problem, wanted, ...rest } = toProblem(state, caseId)
+    const solved = solvedCase({ ...rest, solution: solve(problem, wanted) })
     return { solved, stale: false, trouble: null }
   }, [state, caseId])
 }

@@ -45,7 +45,7 @@ export type WorkbenchProps = {
   headerEnd?: React.ReactNode
 }
 
-const startOpen: ReadonlySet<SectionKey> = new Set(['fraction', 'componentFlow'])
+const startOpen: ReadonlySet<SectionKey> = new Set(['fraction', 'componentFlow', 'measures'])
 
 /** One book at work: header, strip, sheet, panels and cell card, over any handle of a book. */
 export function Workbench({ book, solver, caseId, crumb = null, kept = 'All changes kept', ...props }: WorkbenchProps) {

@@ -42,4 +42,4 @@ export const aboveZero = (table: string, column: AnyPgColumn) =>
 
 export const holds = (table: string, name: string, condition: SQL) => check(`${table}_${name}`, condition)
 
-const list = (values: readonly string[]) => sql.raw(values.map((value) => `'${value}'`).join(', '))
+export const list = (values: readonly string[]) => sql.raw(values.map((value) => `'${value}'`).join(', '))

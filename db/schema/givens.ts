@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm'
 import { index, pgTable, text } from 'drizzle-orm/pg-core'
 import * as column from './columns'
+import { measure, measureQuantities } from './measures'
 import { component, stream } from './structure'
 
 const quantities = [
@@ -13,6 +14,7 @@ const quantities = [
   'volumeFlow',
   'massFraction',
   'moleFraction',
+  ...measureQuantities,
 ] as const
 const sourceKinds = ['design', 'meter', 'laboratory', 'assumption', 'difference'] as const
 const uses = ['given', 'check', 'withdrawn'] as const
@@ -39,6 +41,7 @@ export const given = pgTable(
     streamId: column.reference('stream_id'),
     quantity: text('quantity', { enum: quantities }).notNull(),
     componentId: column.maybeReference('component_id'),
+    measureId: column.maybeReference('measure_id'),
     instrument: text('instrument').notNull(),
     /** As typed, word for word. */
     text: text('text').notNull(),
@@ -57,22 +60,29 @@ export const given = pgTable(
     column.pointsAt('given', t, t.caseId, operatingCase),
     column.pointsAt('given', t, t.streamId, stream),
     column.pointsAt('given', t, t.componentId, component),
+    column.pointsAt('given', t, t.measureId, measure),
     column.oneOf('given', t.quantity, quantities),
     column.oneOf('given', t.use, uses),
     column.oneOf('given', t.sourceKind, sourceKinds),
     column.holds(
       'given',
       'in_place',
-      sql`${t.id} = concat_ws('/', ${t.caseId}, ${t.streamId}, ${t.quantity}, coalesce(${t.componentId}, ''), ${t.instrument})`,
+      sql`${t.id} = concat_ws('/', ${t.caseId}, ${t.streamId}, ${t.quantity}, coalesce(${t.componentId}, ${t.measureId}, ''), ${t.instrument})`,
     ),
     column.aboveZero('given', t.halfWidth),
     column.aboveZero('given', t.sigma),
     column.holds(
       'given',
       'component_named',
-      sql`(${t.quantity} in ('flow', 'massFlow', 'moleFlow', 'volumeFlow')) = (${t.componentId} is null)`,
+      sql`(${t.quantity} in ('flow', 'massFlow', 'moleFlow', 'volumeFlow')) = (${t.componentId} is null and ${t.measureId} is null)`,
+    ),
+    column.holds(
+      'given',
+      'measure_named',
+      sql`(${t.quantity} in (${column.list(measureQuantities)})) = (${t.measureId} is not null) and num_nonnulls(${t.componentId}, ${t.measureId}) < 2`,
     ),
     index('given_stream_id_idx').on(t.bookId, t.streamId),
     index('given_component_id_idx').on(t.bookId, t.componentId),
+    index('given_measure_id_idx').on(t.bookId, t.measureId),
   ],
 )

@@ -1,8 +1,9 @@
 /** The face of the solver: a checked problem in, states and values out. Pure; runs in a worker, on the server and in scripts. */
 export { atomicWeights } from './chemistry/atomic-weights'
-export { type Atoms, molarMassOf, parseFormula } from './chemistry/chemical-formula'
+export { type Atoms, elementShare, molarMassOf, parseFormula } from './chemistry/chemical-formula'
 export { elementGaps, massGap } from './chemistry/reaction-balance'
 export { type FormulaNode, leavesOf, type ParsedFormula, parseFormulaText } from './formula/parse-formula'
+export { measureKey, nameOf } from './measure/measure-name'
 export * from './measure/units-of-measure'
 export * from './problem'
 export { type ReconcileOptions, reconcile } from './reconcile/reconcile'

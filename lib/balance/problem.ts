@@ -45,17 +45,38 @@ export type Quantity =
   | 'volumeFlow'
   | 'massFraction'
   | 'moleFraction'
+  | ExtraQuantity
+
+/** Ratios that a stream and a component do not name alone: the further keys of `MeasureName` say of what. */
+export type ExtraQuantity =
+  | 'dryMassFraction'
+  | 'dryMoleFraction'
+  | 'elementMassFraction'
+  | 'groupMassRatio'
+  | 'groupMoleRatio'
+
+/** What names a measure of any stream. Lists name components; one that cannot be in the stream counts as none of it. */
+export type MeasureName = {
+  quantity: Quantity
+  component?: string
+  /** Dry fractions: the component over all of the stream but these. The component may be one of them (kg water per kg dry). */
+  without?: string[]
+  /** elementMassFraction: the mass of this element, by the formulas, over the whole stream. */
+  element?: string
+  /** Group ratios: the sum of these … */
+  parts?: string[]
+  /** … over the sum of these; left out: over the whole stream. */
+  over?: string[]
+}
 
 export type Use = 'given' | 'check' | 'withdrawn'
 
 export type SourceKind = 'design' | 'meter' | 'laboratory' | 'assumption' | 'difference'
 
-export type Given = {
+export type Given = MeasureName & {
   stream: string
-  quantity: Quantity
-  component?: string
   value: number
-  /** Flows: the book's flow unit when left out; fractions: 1. */
+  /** Flows: the book's flow unit when left out; fractions and ratios: 1. */
   unit?: string
   /** In the given's unit, > 0. */
   halfWidth?: number

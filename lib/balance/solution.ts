@@ -1,4 +1,4 @@
-import type { Quantity } from './problem'
+import type { MeasureName } from './problem'
 
 /** What a cell's state is, as stored in `Solution.states`. */
 export const CellState = { absent: 0, given: 1, solvable: 2, unknown: 3, atOdds: 4 } as const
@@ -43,7 +43,7 @@ export function slotOf(nComponents: number, stream: number, quantity: CellQuanti
   }
 }
 
-export type Place = { stream: string; quantity: Quantity; component?: string; instrument?: string }
+export type Place = MeasureName & { stream: string; instrument?: string }
 
 export type Diagnostic = {
   code: string
@@ -83,6 +83,12 @@ export type ExtentResult = { reaction: string; state: 'solvable' | 'unknown' | '
 export type SolveStatus = 'solved' | 'open' | 'atOdds' | 'gaveUp'
 
 /**
+ * What a stream holds of each measure that was asked for besides the cells, at `row * nStreams + stream`; `absent` where
+ * the stream has no such measure (none of its components there, or a molar mass, formula or density missing).
+ */
+export type WantedMeasures = { states: Uint8Array; values: Float64Array; flags: Uint8Array }
+
+/**
  * The answer in flat arrays, so that it can be transferred from a worker without cloning cells.
  * Values are in the book's flow unit (molar flows of a mass book in the matching mole unit) and as fractions of 1.
  */
@@ -101,6 +107,8 @@ export type Solution = {
   amplification: [slot: number, factor: number][]
   /** slot -> indexes into conflicts, only for cells held back by a clash. */
   blockedBy: [slot: number, conflicts: number[]][]
+  /** In the order asked for; left out where nothing was. */
+  wanted?: WantedMeasures
   extents: ExtentResult[]
   conflicts: Conflict[]
   /** More minimal sets exist than are listed. */

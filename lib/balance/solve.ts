@@ -3,7 +3,7 @@ import { describeConflicts } from './conflicts/describe-conflicts'
 import { settle } from './conflicts/find-conflicts'
 import { structureDiagnostics } from './diagnostics'
 import { buildModel, ColumnKind, type Model } from './model'
-import type { Problem } from './problem'
+import type { MeasureName, Problem } from './problem'
 import { findRoots } from './roots/find-roots'
 import { columnWithRoots, flagTouching, rootValues } from './roots/root-cells'
 import { rootDiagnostics } from './roots/root-diagnostics'
@@ -11,6 +11,7 @@ import { fixedRuleValue, ruleInUse } from './rows/assemble'
 import type { Solution } from './solution'
 import { findAmplified } from './states/amplification'
 import { emptyCells, fillCells } from './states/fill-cells'
+import { fillWanted } from './states/fill-wanted'
 import { freeScaleBlocks } from './states/free-scale'
 import { pendingDiagnostics, zeroInletDiagnostics } from './states/rule-diagnostics'
 import { countCells, extentResults, freedomWithin } from './states/summary'
@@ -18,13 +19,14 @@ import { countCells, extentResults, freedomWithin } from './states/summary'
 /**
  * States and values of every cell of a checked problem. Never throws for what a person typed: a failure inside gives
  * the status `gaveUp` with a diagnostic that says so. Array sizes are those of `Solution`.
+ * `wanted` names measures besides the cells that are to be answered for every stream.
  */
-export function solve(problem: Problem): Solution {
+export function solve(problem: Problem, wanted: readonly MeasureName[] = []): Solution {
   try {
     const model = buildModel(problem)
     if (!model)
       return gaveUp(problem, `The flow unit ${problem.flowUnit} does not fit a book on a ${problem.basis} basis.`)
-    return solveModel(model)
+    return solveModel(model, wanted)
   } catch (error) {
     const reason = error instanceof Error ? error.message : String(error)
     return gaveUp(
@@ -34,7 +36,7 @@ export function solve(problem: Problem): Solution {
   }
 }
 
-function solveModel(model: Model): Solution {
+function solveModel(model: Model, wanted: readonly MeasureName[]): Solution {
   const linear = settle(model)
   const roots = findRoots(model, linear)
   const settled = roots?.sure ?? linear
@@ -62,6 +64,7 @@ function solveModel(model: Model): Solution {
     ...cells,
     amplification,
     blockedBy: blockedCells(model, settled, cells),
+    ...(wanted.length > 0 && { wanted: fillWanted(model, settled, cells, wanted, roots) }),
     extents: extentResults(model, givenExtents(model), known),
     conflicts: describeConflicts(model, settled),
     ...(settled.truncated && { conflictsTruncated: true }),

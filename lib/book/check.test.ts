@@ -109,7 +109,7 @@ describe('the table of kinds', () => {
         .filter((record) => placeId(record) !== undefined)
         .map(({ kind }) => kind),
     ).toContain('given')
-    expect(schemas.given.shape.quantity.options).toHaveLength(9)
+    expect(schemas.given.shape.quantity.options).toHaveLength(14)
   })
 
   it('calls records by tag or name, and has no book in an empty state', () => {

@@ -1,6 +1,8 @@
 import { bookUnits } from '@/lib/balance/measure/units-of-measure'
 import type { Change } from './change'
+import { checkMeasure } from './check-measure'
 import { type BookRecord, type Kind, kindNames, kindOrder, placeId, references, schemas } from './kinds'
+import { isMeasureQuantity } from './measures'
 import type { BookState } from './state'
 
 /** What is wrong with a record, where, and what to do. */
@@ -10,6 +12,7 @@ const tagged: readonly Kind[] = ['component', 'stream', 'unit', 'reaction', 'par
 
 /** What a record is called in a sentence: "stream 101". */
 export function calledBy(record: BookRecord): string {
+  if (record.kind === 'measure') return record.name === '' ? kindNames.measure : `${kindNames.measure} ${record.name}`
   if ('tag' in record) return `${kindNames[record.kind]} ${record.tag}`
   if ('name' in record) return `${kindNames[record.kind]} ${record.name}`
   return kindNames[record.kind]
@@ -70,8 +73,13 @@ function checkRecord(after: BookState, record: BookRecord, problems: RecordProbl
   }
   if (record.kind === 'stream' && (record.fractions === 'difference') !== (record.differenceComponentId !== null))
     problems.push({ kind, id, field: 'fractions', what: `${calledBy(record)}: say which component is by difference` })
+  if (record.kind === 'measure' || record.kind === 'measurePart') checkMeasure(after, record, problems)
   if (record.kind === 'given') {
-    const wantsComponent = !['flow', 'massFlow', 'moleFlow', 'volumeFlow'].includes(record.quantity)
+    const ofRow = isMeasureQuantity(record.quantity)
+    const measure = record.measureId == null ? undefined : after.measure.get(record.measureId)
+    if (ofRow ? measure?.quantity !== record.quantity : record.measureId != null)
+      problems.push({ kind, id, field: 'measureId', what: 'A given of a row is of the quantity of that row' })
+    const wantsComponent = !ofRow && !['flow', 'massFlow', 'moleFlow', 'volumeFlow'].includes(record.quantity)
     if (wantsComponent !== (record.componentId !== null))
       problems.push({
         kind,

@@ -2,6 +2,7 @@ import type { Given, Problem, Rule, Value } from '@/lib/balance/problem'
 import { plainDecimal, shiftDecimal } from './decimal-text'
 import { absenceId, coefficientId, givenId, linkId, ruleStreamId } from './ids'
 import type { BookRecord, RecordOf } from './kinds'
+import { rowRecords } from './measure-records'
 
 type Ids = ReadonlyMap<string, string>
 
@@ -118,17 +119,21 @@ export function fromProblem(problem: Problem, makeId: () => string): BookRecord[
       note: null,
       position: index + 1,
     })
+  const rows = rowRecords(problem, makeId, (tag) => of(ids.component, tag))
+  records.push(...rows.records)
   for (const given of problem.givens ?? []) {
     const streamId = of(ids.stream, given.stream)
-    const componentId = given.component === undefined ? null : of(ids.component, given.component)
+    const measureId = rows.idOf(given)
+    const componentId = given.component === undefined || measureId !== null ? null : of(ids.component, given.component)
     const instrument = given.instrument ?? 'main'
     records.push({
       kind: 'given',
-      id: givenId(baseCase.id, streamId, given.quantity, componentId, instrument),
+      id: givenId(baseCase.id, streamId, given.quantity, componentId ?? measureId, instrument),
       caseId: baseCase.id,
       streamId,
       quantity: given.quantity,
       componentId,
+      measureId,
       instrument,
       ...typedAs(given, problem),
       use: given.use ?? 'given',
@@ -147,7 +152,7 @@ function typedAs(
   given: Given,
   { basis, flowUnit }: Problem,
 ): Pick<RecordOf<'given'>, 'text' | 'value' | 'unit' | 'halfWidth' | 'sigma'> {
-  const fraction = given.quantity === 'massFraction' || given.quantity === 'moleFraction'
+  const fraction = given.quantity.endsWith('Fraction')
   const inPercent = fraction && (given.unit === undefined || given.unit === '1')
   const scaled = (value: number): number => (inPercent ? shiftDecimal(value, 2) : value)
   const inBookBasis =

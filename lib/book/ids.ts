@@ -8,6 +8,7 @@ export type UnitId = Brand<'unit'>
 export type ReactionId = Brand<'reaction'>
 export type RuleId = Brand<'rule'>
 export type ParameterId = Brand<'parameter'>
+export type MeasureId = Brand<'measure'>
 export type CaseId = Brand<'case'>
 
 const ALPHABET = '0123456789abcdefghjkmnpqrstvwxyz'
@@ -25,10 +26,13 @@ export const absenceId = (stream: StreamId, component: ComponentId): string => `
 export const linkId = (stream: StreamId, direction: 'in' | 'out'): string => `${stream}/${direction}`
 export const coefficientId = (reaction: ReactionId, component: ComponentId): string => `${reaction}/${component}`
 export const ruleStreamId = (rule: RuleId, stream: StreamId): string => `${rule}/${stream}`
+export const measurePartId = (measure: MeasureId, side: string, component: ComponentId): string =>
+  `${measure}/${side}/${component}`
+/** `of`: what of the stream, a component or a row's measure. */
 export const givenId = (
   caseId: CaseId,
   stream: StreamId,
   quantity: string,
-  component: ComponentId | null,
+  of: ComponentId | MeasureId | null,
   instrument = 'main',
-): string => [caseId, stream, quantity, component ?? '', instrument].join('/')
+): string => [caseId, stream, quantity, of ?? '', instrument].join('/')

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { absenceId, coefficientId, givenId, linkId, ruleStreamId } from './ids'
+import { absenceId, coefficientId, givenId, linkId, measurePartId, ruleStreamId } from './ids'
 
 /**
  * Every kind of record of a book: its zod schema, which fields point at which other kind, and, where the place of a
@@ -16,6 +16,15 @@ const position = finite
 const ref = z.string().min(1).max(40)
 const use = z.enum(['given', 'check', 'withdrawn'])
 
+/** Quantities that a `measure` record says the rest of. */
+export const measureQuantities = [
+  'dryMassFraction',
+  'dryMoleFraction',
+  'elementMassFraction',
+  'groupMassRatio',
+  'groupMoleRatio',
+] as const
+
 export const quantities = [
   'flow',
   'componentFlow',
@@ -26,6 +35,7 @@ export const quantities = [
   'volumeFlow',
   'massFraction',
   'moleFraction',
+  ...measureQuantities,
 ] as const
 
 export const sourceKinds = ['design', 'meter', 'laboratory', 'assumption', 'difference'] as const
@@ -167,6 +177,32 @@ export const ruleSchema = z.strictObject({
 /** A stream of a sameComposition rule. */
 export const ruleStreamSchema = z.strictObject({ kind: z.literal('ruleStream'), id, ruleId: ref, streamId: ref })
 
+/** A row of the stream table that people add: a measure of every stream with groups or an element of its own. */
+export const measureSchema = z.strictObject({
+  kind: z.literal('measure'),
+  id,
+  /** Empty: called after what it is. */
+  name,
+  quantity: z.enum(measureQuantities),
+  /** Dry fractions. */
+  componentId: ref.nullable(),
+  element: z.string().min(1).max(3).nullable(),
+  /** Group ratios: over the whole stream, or over the parts of side 'over'. */
+  over: z.enum(['stream', 'group']),
+  /** The unit that the row shows. */
+  unit: z.string().min(1).max(40),
+  position,
+})
+
+/** A component of one of a measure's groups. */
+export const measurePartSchema = z.strictObject({
+  kind: z.literal('measurePart'),
+  id,
+  measureId: ref,
+  side: z.enum(['without', 'group', 'over']),
+  componentId: ref,
+})
+
 export const caseSchema = z.strictObject({
   kind: z.literal('case'),
   id,
@@ -181,6 +217,8 @@ export const givenSchema = z.strictObject({
   streamId: ref,
   quantity: z.enum(quantities),
   componentId: ref.nullable(),
+  /** The row of a quantity that a measure record says the rest of; left out in changes older than such rows. */
+  measureId: ref.nullish(),
   instrument: z.string().min(1).max(40),
   /** What was typed, kept word for word. */
   text: z.string().max(400),
@@ -210,6 +248,8 @@ export const schemas = {
   parameter: parameterSchema,
   rule: ruleSchema,
   ruleStream: ruleStreamSchema,
+  measure: measureSchema,
+  measurePart: measurePartSchema,
   case: caseSchema,
   given: givenSchema,
 } as const
@@ -235,6 +275,8 @@ export const recordSchema = z.discriminatedUnion('kind', [
   parameterSchema,
   ruleSchema,
   ruleStreamSchema,
+  measureSchema,
+  measurePartSchema,
   caseSchema,
   givenSchema,
 ])
@@ -261,8 +303,10 @@ export const references: { readonly [K in Kind]: Readonly<Record<string, Kind>> 
     parameterId: 'parameter',
   },
   ruleStream: { ruleId: 'rule', streamId: 'stream' },
+  measure: { componentId: 'component' },
+  measurePart: { measureId: 'measure', componentId: 'component' },
   case: {},
-  given: { caseId: 'case', streamId: 'stream', componentId: 'component' },
+  given: { caseId: 'case', streamId: 'stream', componentId: 'component', measureId: 'measure' },
 }
 
 /** Fields of each kind besides `kind` and `id`, in schema order. */
@@ -281,8 +325,12 @@ export function placeId(record: BookRecord): string | undefined {
       return coefficientId(record.reactionId, record.componentId)
     case 'ruleStream':
       return ruleStreamId(record.ruleId, record.streamId)
-    case 'given':
-      return givenId(record.caseId, record.streamId, record.quantity, record.componentId, record.instrument)
+    case 'measurePart':
+      return measurePartId(record.measureId, record.side, record.componentId)
+    case 'given': {
+      const { caseId, streamId, quantity, componentId, measureId, instrument } = record
+      return givenId(caseId, streamId, quantity, componentId ?? measureId ?? null, instrument)
+    }
     default:
       return undefined
   }
@@ -302,6 +350,8 @@ export const kindNames: { readonly [K in Kind]: string } = {
   parameter: 'parameter',
   rule: 'rule',
   ruleStream: 'stream of a rule',
+  measure: 'row',
+  measurePart: 'component of a row',
   case: 'operating case',
   given: 'given',
 }

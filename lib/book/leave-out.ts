@@ -92,8 +92,9 @@ function sentence(state: BookState, kind: Kind, id: string, what: string): strin
   const record = (state[kind] as ReadonlyMap<string, BookRecord>).get(id)
   const name = record?.kind === 'given' ? placeName(state, record) : record ? calledBy(record) : kind
   // Keys of the problem file are words to a person: a mole fraction, not a moleFraction.
-  const words = what.replace(/\b(?:mass|mole|volume|component)(?:(?:Mass|Mole)?Flow|Fraction)\b/g, (key) =>
-    key.replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`),
+  const words = what.replace(
+    /\b(?:mass|mole|volume|component|dry|element|group)(?:Mass|Mole)?(?:Flow|Fraction|Ratio)\b/g,
+    (key) => key.replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`),
   )
   return `${name[0]?.toUpperCase()}${name.slice(1)}: ${words}.`
 }

@@ -1,5 +1,5 @@
-import type { Problem } from '@/lib/balance/problem'
-import type { ComponentId, StreamId } from './ids'
+import type { MeasureName, Problem } from '@/lib/balance/problem'
+import type { ComponentId, MeasureId, StreamId } from './ids'
 import type { Kind } from './kinds'
 
 /** A record that the solver does not get, and why, as a plain sentence. */
@@ -13,6 +13,9 @@ export type BookProblem = {
   /** Component of each index of `problem.components`. */
   components: ComponentId[]
   leftOut: LeftOut[]
+  /** Measures to be answered besides the cells, and the row of each: 'volumeFlow' where a stream has a density. */
+  wanted: MeasureName[]
+  rows: (MeasureId | 'volumeFlow')[]
 }
 
 /** A problem as it is put together, with the record behind each entry, so that a refusal can be traced back. */

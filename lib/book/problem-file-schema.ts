@@ -49,12 +49,21 @@ const quantity = z.enum([
   'volumeFlow',
   'massFraction',
   'moleFraction',
+  'dryMassFraction',
+  'dryMoleFraction',
+  'elementMassFraction',
+  'groupMassRatio',
+  'groupMoleRatio',
 ])
 
 const given = z.strictObject({
   stream: id,
   quantity,
   component: id.optional(),
+  without: z.array(id).min(1).optional(),
+  element: z.string().min(1).max(3).optional(),
+  parts: z.array(id).min(1).optional(),
+  over: z.array(id).min(1).optional(),
   value: z.number(),
   unit: z.string().optional(),
   halfWidth: positive.optional(),

@@ -46,11 +46,124 @@ describe('a good file', () => {
       given({ stream: '3', quantity: 'componentFlow', component: 'B', value: 0 }),
     ],
     ['fractions in %, ppm, g/kg, mg/kg', given({ quantity: 'massFraction', component: 'A', unit: 'mg/kg' })],
+    [
+      'a dry fraction in %, of a component that it leaves out too',
+      given({ quantity: 'dryMassFraction', component: 'H2O', without: ['H2O'], unit: '%' }),
+    ],
+    [
+      'the assay of an element where every formula is known',
+      {
+        streams: [{ id: '1' }, { id: '2' }, { id: '3', components: ['H2', 'H2O'] }],
+        ...given({ stream: '3', quantity: 'elementMassFraction', element: 'H', unit: 'ppm' }),
+      },
+    ],
+    ['a group over all', given({ quantity: 'groupMassRatio', parts: ['A', 'B'], unit: 'mg/kg' })],
+    ['a group over another', given({ quantity: 'groupMassRatio', parts: ['A'], over: ['B', 'H2'], value: 3 })],
+    ['0 of a group that cannot be there', given({ stream: '3', quantity: 'groupMassRatio', parts: ['B'], value: 0 })],
     ['a rate in another unit', given({ unit: 't/d' })],
     ['a split by a parameter', rule({ kind: 'split', unit: 'U', stream: '2', value: { parameter: 'k' } })],
     ['a formula with quoted ids', rule({ kind: 'formula', text: 'flow("1") = k * flow("2") + part("3", A)' })],
   ])('accepts %s', (_, change) => {
     expect(refusals(change)).toEqual([])
+  })
+})
+
+describe('measures with keys of their own, refused', () => {
+  const dry = { quantity: 'dryMassFraction', component: 'A' }
+  const assay = { quantity: 'elementMassFraction', element: 'H' }
+  const group = { quantity: 'groupMassRatio', parts: ['A'] }
+  it.each<[string, Json, string]>([
+    ['a missing list', given(dry), 'givens.0.without: dryMassFraction needs the components that it leaves out'],
+    [
+      'a missing component',
+      given({ quantity: 'dryMoleFraction', without: ['B'] }),
+      'givens.0.component: dryMoleFraction needs a component',
+    ],
+    [
+      'a missing element',
+      given({ quantity: 'elementMassFraction' }),
+      'givens.0.element: elementMassFraction needs an element',
+    ],
+    [
+      'a missing group',
+      given({ quantity: 'groupMassRatio' }),
+      'givens.0.parts: groupMassRatio needs a group of components',
+    ],
+    ['an empty group', given({ ...group, parts: [] }), 'givens.0.parts: must hold at least 1 entries'],
+    [
+      'a key of another measure',
+      given({ ...group, element: 'H' }),
+      'givens.0.element: groupMassRatio takes no "element": leave it out',
+    ],
+    ['a key on a plain measure', given({ over: ['A'] }), 'givens.0.over: flow takes no "over": leave it out'],
+    [
+      'an unknown component of a list',
+      given({ ...dry, without: ['B', 'X'] }),
+      'givens.0.without.1: "X" is no component',
+    ],
+    ['a component twice', given({ ...group, parts: ['A', 'A'] }), 'givens.0.parts.1: "A" is listed twice'],
+    [
+      'an unknown element',
+      given({ ...assay, element: 'Xx' }),
+      'givens.0.element: "Xx" is no element known here, such as Cu or S',
+    ],
+    ['a formula that is missing', given(assay), 'givens.0.element: needs a formula for A, B, which can be in stream 1'],
+    [
+      'an element that cannot be there',
+      {
+        streams: [{ id: '1', components: ['H2'] }, { id: '2' }, { id: '3', components: ['A', 'H2'] }],
+        ...given({ ...assay, element: 'Cu' }),
+      },
+      'givens.0.element: no component that can be in stream 1 holds Cu, so it cannot be 1',
+    ],
+    [
+      'an absent group',
+      given({ ...group, stream: '3', parts: ['B', 'O2'] }),
+      'givens.0.parts: none of B, O2 can be in stream 3, so it cannot be 1',
+    ],
+    [
+      'nothing to divide by',
+      given({ ...group, stream: '3', over: ['B'] }),
+      'givens.0.over: none of B can be in stream 3, so nothing is left to divide by',
+    ],
+    [
+      'nothing left dry',
+      given({ ...dry, stream: '3', without: ['A', 'H2'] }),
+      'givens.0.without: leaves nothing of stream 3 to divide by',
+    ],
+    [
+      'an absent component',
+      given({ quantity: 'dryMassFraction', stream: '3', component: 'B', without: ['H2'] }),
+      'givens.0.component: B cannot be in stream 3, so it cannot be 1',
+    ],
+    [
+      'a missing molar mass',
+      given({ quantity: 'groupMoleRatio', parts: ['A'], over: ['B', 'H2'] }),
+      'givens.0.quantity: groupMoleRatio on a mass basis needs a molar mass for B',
+    ],
+    [
+      'a unit of the other basis',
+      given({ ...group, unit: 'mol%' }),
+      'givens.0.unit: "mol%" does not fit a groupMassRatio',
+    ],
+    ['a unit of flow', given({ ...group, unit: 'kg/h' }), 'givens.0.unit: "kg/h" is no known unit of a ratio'],
+    [
+      'the same groups in another order',
+      {
+        givens: [
+          { stream: '1', quantity: 'groupMassRatio', parts: ['A', 'B'], value: 1 },
+          { stream: '1', quantity: 'groupMassRatio', parts: ['B', 'A'], value: 2 },
+        ],
+      },
+      'givens.1: is the same measure and instrument as givens.0',
+    ],
+  ])('%s', (_, change, refusal) => {
+    expect(refusals(change)).toEqual([refusal])
+  })
+
+  it('needs no molar mass of what a dry basis leaves out', () => {
+    const problem = given({ quantity: 'dryMoleFraction', component: 'A', without: ['B'], value: 0.5 })
+    expect(refusals(problem)).toEqual([])
   })
 })
 

@@ -1,6 +1,7 @@
 import type { Direction, Given, Problem, Reaction, Stream, Unit } from '@/lib/balance/problem'
 import type { BookRecord, RecordOf } from './kinds'
 import { leaveOutRefused } from './leave-out'
+import { measureName } from './measures'
 import type { BookProblem, Draft, DraftList, LeftOut } from './problem-draft'
 import { ruleOf } from './rule-to-problem'
 import { type BookState, bookOf, inOrder } from './state'
@@ -70,7 +71,24 @@ export function toProblem(state: BookState, caseId: string): BookProblem {
     else put('relations', rule, entry)
   }
   leaveOutRefused(state, draft, leftOut)
-  return { problem: draft.problem, streams: draft.from.streams, components: draft.from.components, leftOut }
+  const { problem, from } = draft
+  return { problem, streams: from.streams, components: from.components, leftOut, ...wantedOf(state, streams) }
+}
+
+/** The rows that people added and, where a density says what it is, volume flow. */
+function wantedOf(state: BookState, streams: RecordOf<'stream'>[]): Pick<BookProblem, 'wanted' | 'rows'> {
+  const found: Pick<BookProblem, 'wanted' | 'rows'> = { wanted: [], rows: [] }
+  if (streams.some(({ density }) => density !== null)) {
+    found.wanted.push({ quantity: 'volumeFlow' })
+    found.rows.push('volumeFlow')
+  }
+  for (const measure of inOrder(state.measure)) {
+    const name = measureName(state, measure)
+    if (typeof name === 'string') continue
+    found.wanted.push(name)
+    found.rows.push(measure.id)
+  }
+  return found
 }
 
 function nameOf(state: BookState, caseId: string): string {
@@ -155,13 +173,17 @@ function reactionOf(state: BookState, reaction: RecordOf<'reaction'>): Reaction 
 /** By stream, component, quantity and instrument, so that the order of typing shows nowhere. */
 function givensInOrder(state: BookState, caseId: string): RecordOf<'given'>[] {
   const streamAt = new Map(inOrder(state.stream).map(({ id }, index) => [id, index]))
-  const componentAt = new Map(inOrder(state.component).map(({ id }, index) => [id, index]))
+  const componentAt = new Map(
+    [...inOrder(state.component), ...inOrder(state.measure)].map(({ id }, index) => [id, index]),
+  )
   const components = componentAt.size + 1
   const keyed: [number, RecordOf<'given'>][] = []
   for (const given of state.given.values())
     if (given.caseId === caseId)
       keyed.push([
-        (streamAt.get(given.streamId) ?? 0) * components + (componentAt.get(given.componentId ?? '') ?? -1) + 1,
+        (streamAt.get(given.streamId) ?? 0) * components +
+          (componentAt.get(given.componentId ?? given.measureId ?? '') ?? -1) +
+          1,
         given,
       ])
   keyed.sort(([a, one], [b, other]) => a - b || (one.id < other.id ? -1 : 1))
@@ -172,6 +194,9 @@ function givenOf(state: BookState, given: RecordOf<'given'>): Given | string {
   const stream = state.stream.get(given.streamId)
   const component = given.componentId === null ? undefined : state.component.get(given.componentId)
   if (!stream || (given.componentId !== null && !component)) return 'What this value belongs to is gone: clear it.'
+  const measure = given.measureId == null ? undefined : state.measure.get(given.measureId)
+  const name = measure && measureName(state, measure)
+  if (typeof name === 'string') return name
   if (given.value === null) return `“${given.text}” could not be read as a number: type it again or clear the cell.`
   if (component && given.value !== 0 && state.absence.has(`${stream.id}/${component.id}`))
     return `${component.tag} cannot be in stream ${stream.tag}: clear the value, or let the component be present.`
@@ -179,6 +204,7 @@ function givenOf(state: BookState, given: RecordOf<'given'>): Given | string {
     stream: stream.tag.trim(),
     quantity: given.quantity,
     ...(component && { component: component.tag.trim() }),
+    ...name,
     value: given.value,
     ...(given.unit !== null && { unit: given.unit }),
     ...(given.halfWidth !== null && { halfWidth: given.halfWidth }),

@@ -51,8 +51,14 @@ export function unitKindOf(quantity: Quantity, basis: Basis): UnitKind {
     case 'volumeFlow':
       return 'volume'
     case 'massFraction':
+    case 'dryMassFraction':
+    case 'elementMassFraction':
+    case 'groupMassRatio':
+      return 'massFraction'
     case 'moleFraction':
-      return quantity
+    case 'dryMoleFraction':
+    case 'groupMoleRatio':
+      return 'moleFraction'
   }
 }
 

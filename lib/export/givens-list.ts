@@ -1,5 +1,6 @@
 import type { Problem } from '@/lib/balance/problem'
 import type { RecordOf } from '@/lib/book/kinds'
+import { measureTitle } from '@/lib/book/measures'
 import type { LeftOut } from '@/lib/book/problem-draft'
 import { type BookState, bookOf, inOrder } from '@/lib/book/state'
 
@@ -34,6 +35,11 @@ export const quantityWords: { readonly [Q in Given['quantity']]: string } = {
   volumeFlow: 'volume flow',
   massFraction: 'mass fraction',
   moleFraction: 'mole fraction',
+  dryMassFraction: 'dry mass fraction',
+  dryMoleFraction: 'dry mole fraction',
+  elementMassFraction: 'element mass fraction',
+  groupMassRatio: 'mass ratio',
+  groupMoleRatio: 'mole ratio',
 }
 
 const useWords = { given: 'given', check: 'check only', withdrawn: 'withdrawn' } as const
@@ -56,20 +62,25 @@ export function givensOf(
   const components = inOrder(state.component)
   const streamAt = new Map(streams.map(({ id }, index) => [id as string, index]))
   const componentAt = new Map(components.map(({ id }, index) => [id as string, index]))
+  const rowAt = new Map(inOrder(state.measure).map((measure, index) => [measure.id as string, { measure, index }]))
   const whyLeftOut = new Map(leftOut.filter(({ kind }) => kind === 'given').map(({ id, what }) => [id, what]))
   const order = (given: Given): [number, number, number] => [
     streamAt.get(given.streamId) ?? -1,
     Object.keys(quantityWords).indexOf(given.quantity),
-    componentAt.get(given.componentId ?? '') ?? -1,
+    componentAt.get(given.componentId ?? '') ?? rowAt.get(given.measureId ?? '')?.index ?? -1,
   ]
+  const titleOf = (given: Given): string | undefined => {
+    const row = rowAt.get(given.measureId ?? '')
+    return row && measureTitle(state, row.measure)
+  }
   return [...state.given.values()]
     .filter((given) => given.caseId === caseId)
     .map((given) => ({ given, at: order(given) }))
     .sort((a, b) => a.at[0] - b.at[0] || a.at[1] - b.at[1] || a.at[2] - b.at[2] || (a.given.id < b.given.id ? -1 : 1))
-    .map(({ given, at: [stream, , component] }) => ({
+    .map(({ given, at: [stream] }) => ({
       stream: streams[stream]?.tag ?? '',
       measure: quantityWords[given.quantity],
-      component: components[component]?.tag ?? '',
+      component: titleOf(given) ?? state.component.get(given.componentId ?? '')?.tag ?? '',
       instrument: given.instrument === 'main' ? '' : given.instrument,
       text: given.text,
       value: given.value,

@@ -36,6 +36,13 @@ export function entryMeasure(quantity: Quantity, basis: 'mass' | 'mole'): EntryM
       return 'massFlow'
     case 'componentMoleFlow':
       return 'moleFlow'
+    case 'dryMassFraction':
+    case 'elementMassFraction':
+    case 'groupMassRatio':
+      return 'massFraction'
+    case 'dryMoleFraction':
+    case 'groupMoleRatio':
+      return 'moleFraction'
     default:
       return quantity
   }

@@ -69,6 +69,7 @@ export const flow = (caseId: string, streamId: string, number: number): RecordOf
   streamId,
   quantity: 'flow',
   componentId: null,
+  measureId: null,
   instrument: 'main',
   text: String(number),
   value: number,

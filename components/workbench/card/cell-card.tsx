@@ -38,16 +38,7 @@ export function CellCard({ view, desk, pane, place }: CellCardProps) {
   const ref = readRow(place.row)
   if (!ref) return <Nothing />
   if (stream && ref.kind === 'value')
-    return (
-      <ValueCard
-        key={`${place.row}~${place.column}`}
-        view={view}
-        desk={desk}
-        stream={stream}
-        quantity={ref.quantity}
-        componentId={ref.componentId}
-      />
-    )
+    return <ValueCard key={`${place.row}~${place.column}`} view={view} desk={desk} stream={stream} row={ref} />
   if (stream) return <StreamCard key={stream.id} view={view} desk={desk} stream={stream} />
   const component =
     ref.kind === 'value' && ref.componentId !== null && (place.column === NAME_COLUMN || place.column === UNIT_COLUMN)

@@ -6,7 +6,7 @@ import type { Desk } from '../desk'
 import { MemberWays } from '../odds/member-ways'
 import { type OddsMember, oddsOf } from '../odds/odds-sets'
 import { backToCell } from '../regions'
-import { type RowQuantity, valueRow } from '../rows'
+import { type RowPlace, rowIdOf } from '../rows'
 import { CardSection } from './card-parts'
 
 /** More at once cannot be read; settling one usually settles others. */
@@ -16,15 +16,14 @@ type ConflictListProps = {
   view: BookView
   desk: Desk
   stream: RecordOf<'stream'>
-  quantity: RowQuantity
-  componentId: string | null
+  row: RowPlace
 }
 
 /** The clashes that a cell takes part in: what the others imply, by how much, and the ways out for each member. */
-export function ConflictList({ view, desk, stream, quantity, componentId }: ConflictListProps) {
+export function ConflictList({ view, desk, stream, row }: ConflictListProps) {
   const odds = oddsOf(view)
-  const row = valueRow(quantity, componentId)
-  const isHere = ({ place }: OddsMember) => place?.row === row && place.column === stream.id
+  const rowId = rowIdOf(row)
+  const isHere = ({ place }: OddsMember) => place?.row === rowId && place.column === stream.id
   const sets = odds.sets.filter(({ members }) => members.some(isHere))
   const own = sets[0]?.members.filter(isHere) ?? []
   if (own.length === 0) return null

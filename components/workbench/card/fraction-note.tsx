@@ -9,23 +9,23 @@ import type { Reading } from '../cell-reading'
 import type { Desk } from '../desk'
 import { FractionChoice } from '../odds/fraction-choice'
 import { oddsOf } from '../odds/odds-sets'
-import type { RowQuantity } from '../rows'
+import type { RowPlace } from '../rows'
 import { CardSection } from './card-parts'
 
 type FractionNoteProps = {
   view: BookView
   desk: Desk
   stream: RecordOf<'stream'>
-  quantity: RowQuantity
+  row: RowPlace
   reading: Reading
 }
 
 /** On the card of a fraction whose stream does not add up, or where the person has already chosen what happens then. */
-export function FractionNote({ view, desk, stream, quantity, reading }: FractionNoteProps) {
-  if (!isFraction(quantity)) return null
+export function FractionNote({ view, desk, stream, row, reading }: FractionNoteProps) {
+  if (!isFraction(row.quantity)) return null
   const off = oddsOf(view).sets.some(({ fractionsOf }) => fractionsOf === stream.id)
   if (!off && stream.fractions === 'asTyped') return null
-  const scaled = stream.fractions === 'scale' ? scaledWords(view, stream.id, quantity, reading) : null
+  const scaled = stream.fractions === 'scale' ? scaledWords(view, stream.id, row, reading) : null
   return (
     <CardSection title={`Fractions of ${stream.tag}`}>
       {scaled ? <p className="mb-2 text-sm">{scaled}</p> : null}
@@ -35,12 +35,12 @@ export function FractionNote({ view, desk, stream, quantity, reading }: Fraction
 }
 
 /** "The typed fractions add up to 105.0 %; scaled, this one is 76.19 %." */
-function scaledWords(view: BookView, streamId: string, quantity: RowQuantity, reading: Reading): string | null {
-  const { symbol } = rowUnit(view, quantity)
+function scaledWords(view: BookView, streamId: string, row: RowPlace, reading: Reading): string | null {
+  const { symbol } = rowUnit(view, row)
   let sum = 0
   for (const { id } of view.components) {
     if (view.state.absence.has(absenceId(streamId, id))) continue
-    const given = view.givensAt.get(cellKey(streamId, quantity, id))?.[0]
+    const given = view.givensAt.get(cellKey(streamId, { ...row, componentId: id }))?.[0]
     if (!given || given.value === null || given.use !== 'given') return null
     sum += convert(given.value, given.unit ?? '1', symbol) ?? Number.NaN
   }

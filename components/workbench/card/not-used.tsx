@@ -7,10 +7,10 @@ import { type BookView, rowUnit } from '../book-view'
 import { type Reading, typedNumber } from '../cell-reading'
 import type { Desk } from '../desk'
 import { backToCell } from '../regions'
-import type { RowQuantity } from '../rows'
+import type { RowPlace } from '../rows'
 import { CardSection } from './card-parts'
 
-type NotUsedProps = { view: BookView; desk: Desk; quantity: RowQuantity; reading: Reading }
+type NotUsedProps = { view: BookView; desk: Desk; row: RowPlace; reading: Reading }
 
 const says = {
   check: 'It is kept as a check only: shown, not used.',
@@ -19,15 +19,15 @@ const says = {
 }
 
 /** What stands typed in a cell that does not use it, and the way back. */
-export function NotUsed({ view, desk, quantity, reading }: NotUsedProps) {
+export function NotUsed({ view, desk, row, reading }: NotUsedProps) {
   const { given, kept } = reading
   if (!given || !kept) return null
-  const typed = typedNumber(view, quantity, given)
+  const typed = typedNumber(view, row, given)
   return (
     <CardSection title="Typed, not used">
       <p className="text-sm">
         <span className={`cell-kept-${kept} me-1.5 inline-block`} aria-hidden="true" />
-        {typed === null ? `“${given.text}”` : `${typed} ${rowUnit(view, quantity).shown}`}. {says[kept]}
+        {typed === null ? `“${given.text}”` : `${typed} ${rowUnit(view, row).shown}`}. {says[kept]}
       </p>
       {view.mayEdit && kept !== 'difference' ? (
         <Button

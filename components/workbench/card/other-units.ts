@@ -2,7 +2,7 @@ import { parseFlowUnit } from '@/lib/balance/measure/units-of-measure'
 import { convert } from '@/lib/book/units'
 import { formatNumber } from '@/lib/sheet/format'
 import { type BookView, isFraction, rowUnit } from '../book-view'
-import type { RowQuantity } from '../rows'
+import type { RowPlace } from '../rows'
 
 const offered: Record<'mass' | 'mole' | 'volume', string[]> = {
   mass: ['kg/h', 't/h', 't/d', 'kg/s', 'lb/h'],
@@ -15,11 +15,22 @@ const batches: Record<'mass' | 'mole' | 'volume', string[]> = {
   volume: ['m3', 'L'],
 }
 
+const ratioUnits: readonly [unit: string, shown: string][] = [
+  ['1', 'of 1'],
+  ['%', '%'],
+  ['ppm', 'ppm'],
+]
+
 /** The same value in other units that people ask for: "10.94 t/h". */
-export function otherUnits(view: BookView, quantity: RowQuantity, value: number): string[] {
+export function otherUnits(view: BookView, row: RowPlace, value: number): string[] {
   const { decimal } = view
-  const { symbol } = rowUnit(view, quantity)
-  if (isFraction(quantity)) {
+  const { symbol } = rowUnit(view, row)
+  if (row.quantity === 'measure')
+    return ratioUnits.flatMap(([unit, shown]) => {
+      const other = unit === symbol ? undefined : convert(value, symbol, unit)
+      return other === undefined ? [] : [`${formatNumber(other, 'flow', { decimal })} ${shown}`]
+    })
+  if (isFraction(row.quantity)) {
     const share = formatNumber(value / 100, 'fraction', { decimal })
     const ppm = value < 1 ? [`${formatNumber(value * 1e4, 'flow', { decimal })} ppm`] : []
     return [`${share} of 1`, ...ppm]

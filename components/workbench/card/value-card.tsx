@@ -6,11 +6,11 @@ import { setGivens } from '@/lib/book/edits/givens'
 import { setPresence } from '@/lib/book/edits/presence'
 import { newId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
-import { type BookView, rowUnit } from '../book-view'
+import { type BookView, rowUnit, titleOfRow } from '../book-view'
 import { flagWords, isDoubtful, keptWords, type Reading, readCell, shownNumber } from '../cell-reading'
 import { CommitInput } from '../commit-input'
 import type { Desk } from '../desk'
-import { type RowQuantity, rowTitle, valueRow } from '../rows'
+import { type RowPlace, rowIdOf } from '../rows'
 import { readTyped } from '../table-edits'
 import { sentence } from '../words'
 import { CardHead, CardSection, StateTag } from './card-parts'
@@ -24,17 +24,17 @@ type ValueCardProps = {
   view: BookView
   desk: Desk
   stream: RecordOf<'stream'>
-  quantity: RowQuantity
-  componentId: string | null
+  row: RowPlace
 }
 
 /** One cell of the stream table: its value in several units, its state, what was typed and where that comes from. */
-export function ValueCard({ view, desk, stream, quantity, componentId }: ValueCardProps) {
-  const reading = readCell(view, stream.id, quantity, componentId)
-  const { shown } = rowUnit(view, quantity)
+export function ValueCard({ view, desk, stream, row }: ValueCardProps) {
+  const { componentId } = row
+  const reading = readCell(view, stream.id, row)
+  const { shown } = rowUnit(view, row)
   const component = componentId === null ? undefined : view.state.component.get(componentId)
-  const title = rowTitle(quantity, view.book.basis)
-  const number = shownNumber(view, quantity, reading, 1)
+  const title = titleOfRow(view, row)
+  const number = shownNumber(view, row, reading, 1)
   const heading = component ? `${component.name || component.tag}, ${title.toLowerCase()}` : title
   return (
     <>
@@ -46,7 +46,7 @@ export function ValueCard({ view, desk, stream, quantity, componentId }: ValueCa
       <p className="mt-1.5 flex flex-wrap items-center gap-x-2.5 gap-y-1 text-xs text-ink-2">
         <StateTag state={reading.state} />
         {reading.kept ? <Tag>{sentence(keptWords[reading.kept])}</Tag> : null}
-        {reading.value === null ? null : otherUnits(view, quantity, reading.value).join(' · ')}
+        {reading.value === null ? null : otherUnits(view, row, reading.value).join(' · ')}
       </p>
       {reading.reason || reading.flags ? (
         <div
@@ -58,9 +58,9 @@ export function ValueCard({ view, desk, stream, quantity, componentId }: ValueCa
           ))}
         </div>
       ) : null}
-      <ConflictList view={view} desk={desk} stream={stream} quantity={quantity} componentId={componentId} />
-      <FractionNote view={view} desk={desk} stream={stream} quantity={quantity} reading={reading} />
-      <NotUsed view={view} desk={desk} quantity={quantity} reading={reading} />
+      <ConflictList view={view} desk={desk} stream={stream} row={row} />
+      <FractionNote view={view} desk={desk} stream={stream} row={row} reading={reading} />
+      <NotUsed view={view} desk={desk} row={row} reading={reading} />
       {view.mayEdit && reading.state !== 'absent' ? (
         <CardSection title="Value">
           <CommitInput
@@ -68,7 +68,7 @@ export function ValueCard({ view, desk, stream, quantity, componentId }: ValueCa
             value={reading.given?.text ?? ''}
             hint={`In ${shown}, or with another unit behind it`}
             onCommit={(text) => {
-              const place = { row: valueRow(quantity, componentId), column: stream.id }
+              const place = { row: rowIdOf(row), column: stream.id }
               const cell = readTyped(view, place, text)
               return cell ? desk.run(setGivens(view.state, [cell], newId)) : null
             }}

@@ -4,9 +4,9 @@ import { Button } from '@/components/ui/button'
 import { setUse, type UsedRef, usedName } from '@/lib/book/edits/ways-out'
 import { newId } from '@/lib/book/ids'
 import { inOrder } from '@/lib/book/state'
-import type { BookView } from '../book-view'
+import { type BookView, rowOfGiven } from '../book-view'
 import type { Desk } from '../desk'
-import { rowQuantityOf, valueRow } from '../rows'
+import { rowIdOf } from '../rows'
 import { sentence } from '../words'
 
 type Aside = { ref: UsedRef; use: 'check' | 'withdrawn'; typed: string }
@@ -44,7 +44,7 @@ export function KeptAside({ view, desk, onDone }: { view: BookView; desk: Desk; 
                     className="link text-start"
                     onClick={() =>
                       desk.show('table', {
-                        row: valueRow(rowQuantityOf(given.quantity, view.book.basis), given.componentId),
+                        row: rowIdOf(rowOfGiven(given, view.book.basis)),
                         column: given.streamId,
                       })
                     }

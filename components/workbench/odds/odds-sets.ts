@@ -1,11 +1,12 @@
 import type { GridPlace } from '@/hooks/grid-model'
+import { measureKey } from '@/lib/balance/measure/measure-name'
 import type { Conflict, Place } from '@/lib/balance/solution'
 import { type UsedRef, usedName } from '@/lib/book/edits/ways-out'
 import { givenId } from '@/lib/book/ids'
 import { bookUnitOf, convert } from '@/lib/book/units'
 import { formatNumber } from '@/lib/sheet/format'
-import { type BookView, isFraction, rowUnit } from '../book-view'
-import { rowQuantityOf, valueRow } from '../rows'
+import { type BookView, rowOfPlace, rowStyle, rowUnit } from '../book-view'
+import { rowIdOf } from '../rows'
 import { placeWords, sentence } from '../words'
 
 /** A member of a set that cannot hold, with its numbers in the unit of its row. */
@@ -40,7 +41,7 @@ export type Odds = { sets: OddsSet[]; truncated: boolean }
 const memberKey = (place: Place | string): string =>
   typeof place === 'string'
     ? `rule ${place}`
-    : JSON.stringify([place.stream, place.quantity, place.component ?? '', place.instrument ?? 'main'])
+    : JSON.stringify([place.stream, measureKey(place), place.instrument ?? 'main'])
 
 /** The sets of givens and rules that cannot all hold, as the newest answer lists them; those that settle most first. */
 export function oddsOf(view: BookView): Odds {
@@ -87,20 +88,20 @@ type Clash = Omit<OddsMember, 'settles'>
 
 function givenMember(view: BookView, given: Conflict['givens'][number]): Clash {
   const { basis, flowUnit } = view.book
-  const quantity = rowQuantityOf(given.quantity, basis)
+  const row = rowOfPlace(view, given)
   const stream = streamId(view, given.stream)
-  const component = view.components.find(({ tag }) => tag.trim() === given.component)?.id ?? null
-  const id = givenId(view.caseId, stream ?? '', given.quantity, component, given.instrument)
+  const of = row?.componentId ?? row?.measureId ?? null
+  const id = givenId(view.caseId, stream ?? '', given.quantity, of, given.instrument)
   const from = bookUnitOf(given.quantity, basis, flowUnit) ?? ''
-  const { symbol, shown } = rowUnit(view, quantity)
-  const style = isFraction(quantity) ? 'percent' : 'flow'
+  const { symbol, shown } = row ? rowUnit(view, row) : { symbol: from, shown: from }
+  const style = row ? rowStyle(view, row) : 'flow'
   const say = (value: number, extraDigits = 0) =>
     formatNumber(convert(value, from, symbol) ?? value, style, { decimal: view.decimal, extraDigits })
   return {
     key: memberKey(given),
     ref: view.state.given.has(id) ? { kind: 'given', id } : null,
     name: sentence(placeWords(view, given)),
-    place: stream === null ? null : { row: valueRow(quantity, component), column: stream },
+    place: stream === null || !row ? null : { row: rowIdOf(row), column: stream },
     typed: say(given.typed),
     implied: say(given.implied, 1),
     by: signed(say(given.by, 1), given.by),

@@ -58,8 +58,15 @@ function readGroup(text: string): Atoms | undefined {
 /** kg/kmol of a formula, or undefined where it cannot be read. */
 export function molarMassOf(formula: string): number | undefined {
   const atoms = parseFormula(formula)
-  if (!atoms) return undefined
+  return atoms && massOf(atoms)
+}
+
+function massOf(atoms: Atoms): number {
   let sum = 0
   for (const [element, count] of Object.entries(atoms)) sum += (atomicWeights[element] as number) * count
   return sum
 }
+
+/** Mass of one element in a component of these atoms, per mass of the component; the shares of all elements add up to 1. */
+export const elementShare = (atoms: Atoms, element: string): number =>
+  ((atoms[element] ?? 0) * (atomicWeights[element] ?? 0)) / massOf(atoms)

@@ -1,5 +1,6 @@
-import { measureOf } from '../measure/measure'
-import { isFraction, typedValue } from '../measure/typed-value'
+import { placeOf } from '../measure/measure-name'
+import { namedMeasure } from '../measure/named-measure'
+import { isRatio as isRatioQuantity, typedValue } from '../measure/typed-value'
 import type { Model } from '../model'
 import type { Given, Rule } from '../problem'
 import { assemble, fixedRuleValue } from '../rows/assemble'
@@ -46,10 +47,7 @@ function describe(
       const typed = typedValue(model, given).value
       const by = implied === undefined ? circuit.gap / (circuit.weight.get(member) as number) : typed - implied
       givens.push({
-        stream: given.stream,
-        quantity: given.quantity,
-        ...(given.component !== undefined && { component: given.component }),
-        ...(given.instrument !== undefined && { instrument: given.instrument }),
+        ...placeOf(given),
         typed,
         implied: typed - by,
         by,
@@ -70,7 +68,7 @@ function describe(
 function isRatio(model: Model, member: Member): boolean {
   const nGivens = model.problem.givens?.length ?? 0
   if (member >= nGivens) return true
-  return isFraction((model.problem.givens as Given[])[member]?.quantity as Given['quantity'])
+  return isRatioQuantity((model.problem.givens as Given[])[member]?.quantity as Given['quantity'])
 }
 
 /** What the other members alone say of one member's measure, everything else at odds left out; undefined where nothing. */
@@ -80,9 +78,9 @@ function impliedBy(model: Model, settled: Settled, members: Member[], member: Me
   for (const other of members) if (other !== member) leaveOut.delete(other)
   const { knowledge } = resolve(model, assemble(model, { leaveOut, adjusted: settled.adjusted }))
   if (member < nGivens) {
-    const { stream, quantity, component } = (model.problem.givens as Given[])[member] as Given
-    const c = component === undefined ? -1 : (model.componentIndex.get(component) as number)
-    return knownMeasure(knowledge, measureOf(model, quantity, model.streamIndex.get(stream) as number, c))
+    const given = (model.problem.givens as Given[])[member] as Given
+    const measure = namedMeasure(model, model.streamIndex.get(given.stream) as number, given)
+    return measure && knownMeasure(knowledge, measure)
   }
   for (const measure of measuresOfRule(model, model.problem.relations?.[member - nGivens] as Rule)) {
     const value = knownMeasure(knowledge, measure)

@@ -2,11 +2,11 @@ import type { LinearForm } from '../measure/measure'
 import { ColumnKind, type Model } from '../model'
 import { seededRandom } from '../random'
 import { type Assembly, assemble } from '../rows/assemble'
-import type { AssemblyOptions } from '../rows/members'
+import { type AssemblyOptions, memberOfRule } from '../rows/members'
 import type { Typed } from '../rows/row-store'
 import { compileRows } from '../sparse/compiled-rows'
-import { eliminate } from '../sparse/elimination'
-import { fixedValue, gatherKnowledge } from '../states/knowledge'
+import { type Elimination, eliminate } from '../sparse/elimination'
+import { fixedValue, type Knowledge } from '../states/knowledge'
 import { resolve } from '../states/resolve'
 import type { Resolved } from '../states/resolved'
 import { type Circuit, Tracer } from './circuit'
@@ -40,7 +40,7 @@ export function findForcedZero(
   }
   if (suspects.length === 0) return undefined
 
-  const sharp = keep(model, assembly, (typed, rhs) => !isRatio(typed) || rhs !== 0)
+  const sharp = withoutRatios(model, assembly, options)
   const random = seededRandom(7919)
   const shaken = assemble(model, {
     ...options,
@@ -48,13 +48,19 @@ export function findForcedZero(
     perturb: (value) => value * (1 + 1e-3 * (random() - 0.5)),
   })
   const always = resolve(model, shaken).knowledge
-  const homogeneous = keep(model, assembly, (_, rhs) => rhs === 0)
+  const ones = new Float64Array(model.nColumns).fill(1)
+  const tracer = new Tracer(model, assembly, resolved, { value: ones, size: ones })
+  const homogeneous = (zeros: boolean): Elimination => {
+    const use = Uint8Array.from({ length: rows.count }, (_, i) =>
+      Number(rows.rhs[i] === 0 && (zeros || rows.sources[rows.source[i] as number]?.type !== 'zero')),
+    )
+    return eliminate(compileRows(rows, model.nColumns, use), assembly.nonNegative)
+  }
   for (const form of suspects) {
-    if (fixedValue(gather(model, assembly, sharp), form) === 0) continue
+    if (fixedValue(sharp, form) === 0) continue
     if (fixedValue(always, form) !== 0) continue
-    const e = eliminate(compileRows(rows, model.nColumns, homogeneous), assembly.nonNegative)
-    const ones = new Float64Array(model.nColumns).fill(1)
-    const circuit = new Tracer(model, assembly, resolved, { value: ones, size: ones }).ofForm(e, form)
+    // What rests on the ratios themselves names them; flows that only add up to 0 come second.
+    const circuit = tracer.ofForm(homogeneous(false), form) ?? tracer.ofForm(homogeneous(true), form)
     if (!circuit || circuit.weight.size === 0) continue
     return { circuit, stream: streamOf(model, form) }
   }
@@ -64,18 +70,17 @@ export function findForcedZero(
 const isRatio = (typed: Typed | undefined): boolean =>
   typed?.measure.denominator !== undefined && typed.value !== 0 && typed.value !== 1
 
-function keep(
-  model: Model,
-  { rows }: Assembly,
-  wanted: (typed: Typed | undefined, rhs: number) => boolean,
-): Uint8Array {
-  return Uint8Array.from({ length: rows.count }, (_, i) =>
-    Number(wanted(rows.typed[i], rows.rhs[i] as number) && model.nColumns > 0),
-  )
+/** What holds without the ratios, flows that are 0 for another reason included. */
+function withoutRatios(model: Model, { rows }: Assembly, options: AssemblyOptions): Knowledge {
+  const leaveOut = new Set(options.leaveOut)
+  for (let i = 0; i < rows.count; i++) {
+    const source = rows.sources[rows.source[i] as number]
+    if (!isRatio(rows.typed[i]) || rows.rhs[i] !== 0) continue
+    if (source?.type === 'given') leaveOut.add(source.index)
+    if (source?.type === 'rule') leaveOut.add(memberOfRule(model, source.index))
+  }
+  return resolve(model, assemble(model, { ...options, leaveOut })).knowledge
 }
-
-const gather = (model: Model, { rows, nonNegative }: Assembly, use: Uint8Array) =>
-  gatherKnowledge(eliminate(compileRows(rows, model.nColumns, use), nonNegative))
 
 function streamOf(model: Model, form: LinearForm): number | undefined {
   const column = form.columns[0]

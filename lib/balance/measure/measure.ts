@@ -1,6 +1,6 @@
 import type { Model } from '../model'
 import { otherPerOwn } from '../model'
-import type { Quantity } from '../problem'
+import type { ExtraQuantity, Quantity } from '../problem'
 
 /** Sum of coefficient times column, plus a constant. Columns are not repeated. */
 export type LinearForm = { columns: number[]; coefficients: number[]; constant: number }
@@ -79,8 +79,13 @@ function volume(model: Model, stream: number): LinearForm {
   return combine(model.units.mass.factor / density, mass, 0, constantForm(0))
 }
 
-/** The measure that a quantity of a stream stands for; flows in the units of `model.units`, fractions of 1. */
-export function measureOf(model: Model, quantity: Quantity, stream: number, component: number): Measure {
+/** The measure that a plain quantity of a stream stands for; flows in the units of `model.units`, fractions of 1. */
+export function measureOf(
+  model: Model,
+  quantity: Exclude<Quantity, ExtraQuantity>,
+  stream: number,
+  component: number,
+): Measure {
   const own = model.problem.basis
   switch (quantity) {
     case 'flow':

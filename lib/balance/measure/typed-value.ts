@@ -8,7 +8,8 @@ export type TypedValue = { value: number; halfWidth: number; sigma?: number }
 /** Without a half-width of its own a value is held to this part of itself. */
 export const DEFAULT_HALF_WIDTH = 1e-9
 
-export const isFraction = (quantity: Quantity): boolean => quantity === 'massFraction' || quantity === 'moleFraction'
+/** Fractions and ratios, which have units of their own; every other quantity is a flow. */
+export const isRatio = (quantity: Quantity): boolean => quantity.endsWith('Fraction') || quantity.endsWith('Ratio')
 
 /** Multiplier from a given's unit to the book's; 1 where none is typed. NaN where it does not fit (a checked problem has none). */
 export function unitFactor(
@@ -17,7 +18,7 @@ export function unitFactor(
   unit: string | undefined,
 ): number {
   if (unit === undefined) return 1
-  if (isFraction(quantity)) return parseFractionUnit(unit)?.factor ?? Number.NaN
+  if (isRatio(quantity)) return parseFractionUnit(unit)?.factor ?? Number.NaN
   const typed = parseFlowUnit(unit)
   const { mass, mole, volume } = model.units
   const own = model.problem.basis === 'mass' ? mass : mole
@@ -34,12 +35,12 @@ export function unitFactor(
 
 /**
  * Value and half-width of a given in the book's units. Without a half-width: 1e-9 of the value; for a value of 0, 1e-9
- * for a fraction and 1e-9 of the largest flow typed (1 where none is) for a flow.
+ * for a ratio and 1e-9 of the largest flow typed (1 where none is) for a flow.
  */
 export function typedValue(model: Model, given: Given, largestFlow = 1): TypedValue {
   const factor = unitFactor(model, given.quantity, given.unit)
   const value = given.value * factor
-  const size = value !== 0 ? Math.abs(value) : isFraction(given.quantity) ? 1 : largestFlow
+  const size = value !== 0 ? Math.abs(value) : isRatio(given.quantity) ? 1 : largestFlow
   return {
     value,
     halfWidth: given.halfWidth === undefined ? DEFAULT_HALF_WIDTH * size : given.halfWidth * factor,

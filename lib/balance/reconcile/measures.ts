@@ -1,7 +1,7 @@
 import type { Measure } from '../measure/measure'
-import { measureOf } from '../measure/measure'
+import { placeOf as placeOfGiven } from '../measure/measure-name'
 import type { Model } from '../model'
-import { slotOf } from '../solution'
+import { type Place, slotOf } from '../solution'
 import { cellQuantityOf, forEachCell, quantityOfCell } from '../states/cells'
 import { deviationOf, type Estimate } from './estimate'
 import { addGradient, type ExactSpace, gradientOf } from './exact-space'
@@ -69,7 +69,7 @@ export function reconciledMeasures(
     if (inCells.has(i)) return
     found.push({
       ...placeOf(reading),
-      ...measured(i, measureOf(model, reading.given.quantity, reading.stream, reading.component)),
+      ...measured(i, reading.measure),
     })
   })
   return found
@@ -79,12 +79,7 @@ const instrumentOf = ({ given }: Reading): { instrument?: string } =>
   given.instrument === undefined ? {} : { instrument: given.instrument }
 
 /** Where a reading stands, as it was typed. */
-export const placeOf = ({ given, ...reading }: Reading) => ({
-  stream: given.stream,
-  quantity: given.quantity,
-  ...(given.component !== undefined && { component: given.component }),
-  ...instrumentOf({ given, ...reading }),
-})
+export const placeOf = ({ given }: Reading): Place => placeOfGiven(given)
 
 /** Indexes of readings, the one that a cell shows first: 'main', then by name. */
 function inDisplayOrder(readings: readonly Reading[]): number[] {

@@ -1,4 +1,5 @@
-import { type LinearForm, type Measure, measureOf } from '../measure/measure'
+import type { LinearForm, Measure } from '../measure/measure'
+import { namedMeasure } from '../measure/named-measure'
 import { unitFactor } from '../measure/typed-value'
 import type { Model } from '../model'
 import type { Given } from '../problem'
@@ -26,7 +27,8 @@ const isReading = (given: Given): boolean => given.sigma !== undefined && (given
  */
 export function readingsOf(model: Model): Reading[] {
   return givensInUse(model).givens.flatMap(({ index, given, stream, component, typed, value }): Reading[] => {
-    if (!isReading(given) || (model.present[stream] as number[]).length === 0) return []
+    const measure = isReading(given) ? namedMeasure(model, stream, given) : undefined
+    if (!measure) return []
     const factor = unitFactor(model, given.quantity, given.unit)
     const scaled = model.problem.streams[stream]?.fractions === 'scale' && typed !== 0 ? value / typed : 1
     return [
@@ -35,7 +37,7 @@ export function readingsOf(model: Model): Reading[] {
         given,
         stream,
         component,
-        measure: measureOf(model, given.quantity, stream, component),
+        measure,
         value: typed * scaled,
         sigma: (given.sigma as number) * factor * scaled,
       },

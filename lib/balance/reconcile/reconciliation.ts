@@ -1,14 +1,9 @@
-import type { Quantity } from '../problem'
 import type { Conflict, Place } from '../solution'
 
 /** How a measure stands: whether readings check it, only give it, reach it, or it holds exactly. */
 export type MeasureClass = 'redundant' | 'justDetermined' | 'observable' | 'unobservable' | 'exact'
 
-export type ReconciledMeasure = {
-  stream: string
-  quantity: Quantity
-  component?: string
-  instrument?: string
+export type ReconciledMeasure = Place & {
   class: MeasureClass
   /** Flows in the book's units, fractions of 1, as all that follows. */
   reading?: number

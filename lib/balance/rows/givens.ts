@@ -1,5 +1,6 @@
-import { columnForm, type LinearForm, measureOf } from '../measure/measure'
-import { isFraction, typedValue } from '../measure/typed-value'
+import { columnForm, combine, type LinearForm, type Measure } from '../measure/measure'
+import { dryPart, namedMeasure, writtenOut } from '../measure/named-measure'
+import { isRatio, typedValue } from '../measure/typed-value'
 import { type Model, otherPerOwn } from '../model'
 import type { Given } from '../problem'
 import type { AssemblyOptions } from './members'
@@ -30,7 +31,7 @@ export function givensInUse(
 ): { givens: GivenInUse[]; clashes: FractionClash[] } {
   const givens: GivenInUse[] = []
   const clashes: FractionClash[] = []
-  const fractions = new Map<number, GivenInUse[]>()
+  const wholes = new Map<string, Whole>()
   const largestFlow = largestTypedFlow(model)
   model.problem.givens?.forEach((given, index) => {
     if ((given.use ?? 'given') !== 'given') return
@@ -41,21 +42,13 @@ export function givensInUse(
     const used = perturb && value !== 0 && value !== 1 ? perturb(value) : value
     const entry: GivenInUse = { index, given, stream, component, typed: value, value: used, halfWidth }
     givens.push(entry)
-    if (isFraction(given.quantity) && !leaveOut?.has(index))
-      fractions.set(stream, [...(fractions.get(stream) ?? []), entry])
+    if (!leaveOut?.has(index)) putInWhole(model, wholes, entry)
   })
   const dropped = new Set<GivenInUse>()
-  for (const [stream, entries] of fractions)
-    for (const quantity of ['massFraction', 'moleFraction'] as const) {
-      const clash = settleFractions(
-        model,
-        stream,
-        entries.filter(({ given }) => given.quantity === quantity),
-        dropped,
-        scaleFractions,
-      )
-      if (clash) clashes.push(clash)
-    }
+  for (const whole of wholes.values()) {
+    const clash = settleFractions(model, whole, dropped, scaleFractions)
+    if (clash) clashes.push(clash)
+  }
   for (const entry of givens) entry.value = adjusted?.get(entry.index) ?? entry.value
   return { givens: givens.filter((entry) => !dropped.has(entry)), clashes }
 }
@@ -69,15 +62,29 @@ function largestTypedFlow(model: Model): number {
   return largest || 1
 }
 
+/** Fractions of one stream on one basis, wet or dry, and the components whose fractions add up to 1. */
+type Whole = { stream: number; components: number[]; entries: GivenInUse[] }
+
+function putInWhole(model: Model, wholes: Map<string, Whole>, entry: GivenInUse): void {
+  const { given, stream, component } = entry
+  const { quantity } = given
+  if (component < 0 || !quantity.endsWith('Fraction')) return
+  const dry = quantity === 'dryMassFraction' || quantity === 'dryMoleFraction'
+  const components = dry ? dryPart(model, stream, given) : (model.present[stream] as number[])
+  if (!components.includes(component)) return
+  const key = `${stream}/${quantity}/${dry ? components.join() : ''}`
+  const whole = wholes.get(key)
+  if (whole) whole.entries.push(entry)
+  else wholes.set(key, { stream, components, entries: [entry] })
+}
+
 /** Where every fraction is typed on one basis: scale, drop the one by difference, or share out what rounding leaves. */
 function settleFractions(
   model: Model,
-  stream: number,
-  entries: GivenInUse[],
+  { stream, components: list, entries }: Whole,
   dropped: Set<GivenInUse>,
   scaleAlways: boolean,
 ): FractionClash | undefined {
-  const list = model.present[stream] as number[]
   const main = list.map(
     (c) =>
       entries.find(({ component, given }) => component === c && isMain(given)) ??
@@ -118,16 +125,31 @@ const isMain = (given: Given): boolean => (given.instrument ?? 'main') === 'main
 /** One row for each given in use, named by a source of its own; gives the source of each. */
 export function pushGivens(model: Model, rows: RowStore, givens: readonly GivenInUse[]): void {
   for (const { index, given, stream, component, value, halfWidth } of givens) {
-    if ((model.present[stream] as number[]).length === 0) continue
+    const measure = namedMeasure(model, stream, given)
+    // A checked problem says 0 of what the stream cannot hold: nothing to add.
+    if (!measure) continue
     const source = rows.from({ type: 'given', index })
-    const measure = measureOf(model, given.quantity, stream, component)
-    if (!measure.denominator || value !== 1) rows.pushMeasure(source, measure, value, halfWidth)
-    else {
+    const typed = { measure, value, halfWidth }
+    if (component >= 0 && value === 1 && isRatio(given.quantity) && !given.without) {
       // The whole stream is this component: the others together are 0, so each of them is.
       const rest = others(model, stream, component, given.quantity)
-      rows.push(source, rest.columns, rest.coefficients, 0, { measure, value, halfWidth })
+      rows.push(source, rest.columns, rest.coefficients, 0, typed)
+      continue
     }
+    const none = flowsAtZero(model, stream, measure, value)
+    if (none) for (const column of none) rows.push(source, [column], [1], 0, typed)
+    else rows.pushMeasure(source, measure, value, halfWidth)
   }
+}
+
+/** Flows that cannot be negative and add up to 0, by a ratio of 0, or of 1 where the rest of what it is of is none. */
+function flowsAtZero(model: Model, stream: number, measure: Measure, value: number): number[] | undefined {
+  const { numerator, denominator } = measure
+  if (!denominator || (value !== 0 && value !== 1)) return undefined
+  const top = writtenOut(model, stream, numerator)
+  const rest = value === 0 ? top : combine(1, writtenOut(model, stream, denominator), -1, top)
+  const adds = rest.columns.length > 1 && rest.coefficients.every((coefficient) => coefficient > 0)
+  return adds ? rest.columns : undefined
 }
 
 function others(model: Model, stream: number, component: number, quantity: Given['quantity']): LinearForm {

@@ -25,28 +25,12 @@ const MOST_WORK = 1e7
  * beyond `BLURRED` lose their value and become unknown, in place.
  */
 export function findAmplified(model: Model, settled: Settled, cells: CellArrays): Solution['amplification'] {
-  const { resolved, assembly } = settled
-  const { elimination: e, generic } = resolved.knowledge
-  const changes = randomChanges(assembly, resolved.knowledge, resolved.blur)
-  const tracer = new Tracer(model, assembly, resolved)
+  const amplification = amplifier(model, settled)
   const found: Solution['amplification'] = []
-  let work = 0
   forEachCell(model, ({ slot, measure }) => {
     if (cells.states[slot] !== CellState.solvable) return
-    const value = cells.values[slot] as number
-    if (value === 0 || (measure.denominator && value === 1)) return
-    const { numerator, denominator } = measure
-    const size = Math.abs(denominator ? value * dot(denominator, generic.value) : value)
-    let factor = 0
-    for (const x of changes) {
-      const change = dot(numerator, x) - (denominator ? value * dot(denominator, x) : 0)
-      factor = Math.max(factor, Math.abs(change) / size)
-    }
-    if (!(factor > SUSPECT)) return
-    const form = sensitive(measure, value)
-    work += e.rows.column.length
-    if (work <= MOST_WORK) factor = worstGiven(model, tracer, settled, form, size) ?? factor
-    if (!(factor > AMPLIFIED)) return
+    const factor = amplification(measure, cells.values[slot] as number)
+    if (factor === undefined) return
     found.push([slot, factor])
     cells.flags[slot]! |= CellFlag.amplified
     if (factor <= BLURRED) return
@@ -54,6 +38,30 @@ export function findAmplified(model: Model, settled: Settled, cells: CellArrays)
     cells.values[slot] = Number.NaN
   })
   return found
+}
+
+/** Says of a measure at its value by how much its worst given moves it; undefined up to `AMPLIFIED`. */
+export function amplifier(model: Model, settled: Settled): (measure: Measure, value: number) => number | undefined {
+  const { resolved, assembly } = settled
+  const { elimination: e, generic } = resolved.knowledge
+  const changes = randomChanges(assembly, resolved.knowledge, resolved.blur)
+  const tracer = new Tracer(model, assembly, resolved)
+  let work = 0
+  return (measure, value) => {
+    if (value === 0 || (measure.denominator && value === 1)) return undefined
+    const { numerator, denominator } = measure
+    const size = Math.abs(denominator ? value * dot(denominator, generic.value) : value)
+    let factor = 0
+    for (const x of changes) {
+      const change = dot(numerator, x) - (denominator ? value * dot(denominator, x) : 0)
+      factor = Math.max(factor, Math.abs(change) / size)
+    }
+    if (!(factor > SUSPECT)) return undefined
+    const form = sensitive(measure, value)
+    work += e.rows.column.length
+    if (work <= MOST_WORK) factor = worstGiven(model, tracer, settled, form, size) ?? factor
+    return factor > AMPLIFIED ? factor : undefined
+  }
 }
 
 function dot(form: LinearForm, x: Float64Array): number {

@@ -1,3 +1,4 @@
+import { cellQuantityOn, quantityOn } from '../measure/cell-quantity'
 import type { LinearForm, Measure } from '../measure/measure'
 import { columnForm, otherPart, otherTotal, part, share } from '../measure/measure'
 import { hasOtherBasis, type Model } from '../model'
@@ -36,45 +37,10 @@ export function forEachCell(model: Model, visit: (cell: Cell) => void): void {
   }
 }
 
-/** The cell that a given's quantity names on this basis, undefined for a quantity without one (volume flow). */
-export function cellQuantityOf(model: Model, quantity: Quantity): CellQuantity | undefined {
-  const mass = model.problem.basis === 'mass'
-  switch (quantity) {
-    case 'flow':
-      return 'flow'
-    case 'componentFlow':
-      return 'componentFlow'
-    case 'massFlow':
-      return mass ? 'flow' : 'otherFlow'
-    case 'moleFlow':
-      return mass ? 'otherFlow' : 'flow'
-    case 'componentMassFlow':
-      return mass ? 'componentFlow' : 'otherComponentFlow'
-    case 'componentMoleFlow':
-      return mass ? 'otherComponentFlow' : 'componentFlow'
-    case 'massFraction':
-      return mass ? 'fraction' : 'otherFraction'
-    case 'moleFraction':
-      return mass ? 'otherFraction' : 'fraction'
-    case 'volumeFlow':
-      return undefined
-  }
-}
+/** The cell that a given's quantity names on this basis, undefined for a quantity without one. */
+export const cellQuantityOf = (model: Pick<Model, 'problem'>, quantity: Quantity): CellQuantity | undefined =>
+  cellQuantityOn(model.problem.basis, quantity)
 
 /** The quantity's name in results for a cell on this basis. */
-export function quantityOfCell(model: Pick<Model, 'problem'>, quantity: CellQuantity): Quantity {
-  const mass = model.problem.basis === 'mass'
-  switch (quantity) {
-    case 'flow':
-    case 'componentFlow':
-      return quantity
-    case 'fraction':
-      return mass ? 'massFraction' : 'moleFraction'
-    case 'otherFlow':
-      return mass ? 'moleFlow' : 'massFlow'
-    case 'otherComponentFlow':
-      return mass ? 'componentMoleFlow' : 'componentMassFlow'
-    case 'otherFraction':
-      return mass ? 'moleFraction' : 'massFraction'
-  }
-}
+export const quantityOfCell = (model: Pick<Model, 'problem'>, quantity: CellQuantity): Quantity =>
+  quantityOn(model.problem.basis, quantity)

@@ -57,7 +57,7 @@ export function fillCells(
 }
 
 /** The reading that a cell shows comes last: 'main', else the first instrument by name. */
-function inDisplayOrder(givens: readonly GivenInUse[]): GivenInUse[] {
+export function inDisplayOrder(givens: readonly GivenInUse[]): GivenInUse[] {
   const rank = ({ given }: GivenInUse): string =>
     given.instrument === undefined || given.instrument === 'main' ? '' : `~${given.instrument}`
   return [...givens].sort((a, b) => (rank(a) < rank(b) ? 1 : rank(a) > rank(b) ? -1 : 0))

@@ -110,7 +110,7 @@ export function setGivenDetails(state: BookState, id: string, details: GivenDeta
 }
 
 function newGiven(place: GivenPlace, id: string, typed: TypedGiven): RecordOf<'given'> {
-  const { caseId, streamId, quantity, componentId, instrument = 'main' } = place
+  const { caseId, streamId, quantity, componentId, measureId = null, instrument = 'main' } = place
   return {
     kind: 'given',
     id,
@@ -118,6 +118,7 @@ function newGiven(place: GivenPlace, id: string, typed: TypedGiven): RecordOf<'g
     streamId,
     quantity,
     componentId,
+    measureId,
     instrument,
     text: typed.text,
     value: typed.value,

@@ -1,5 +1,6 @@
-import { type CaseId, type ComponentId, givenId, type StreamId } from '../ids'
+import { type CaseId, type ComponentId, givenId, type MeasureId, type StreamId } from '../ids'
 import type { RecordOf } from '../kinds'
+import { measureTitle } from '../measures'
 import type { BookState } from '../state'
 
 export type Quantity = RecordOf<'given'>['quantity']
@@ -10,13 +11,15 @@ export type GivenPlace = {
   streamId: StreamId
   quantity: Quantity
   componentId: ComponentId | null
+  /** The row, for a quantity that a row says the rest of. */
+  measureId?: MeasureId | null | undefined
   instrument?: string
 }
 
-export const idOfPlace = ({ caseId, streamId, quantity, componentId, instrument }: GivenPlace): string =>
-  givenId(caseId, streamId, quantity, componentId, instrument)
+export const idOfPlace = ({ caseId, streamId, quantity, componentId, measureId, instrument }: GivenPlace): string =>
+  givenId(caseId, streamId, quantity, componentId ?? measureId ?? null, instrument)
 
-const ofStream: Record<Quantity, (component: string) => string> = {
+const ofStream: Partial<Record<Quantity, (component: string) => string>> = {
   flow: () => 'Total flow of',
   massFlow: () => 'Mass flow of',
   moleFlow: () => 'Mole flow of',
@@ -31,10 +34,12 @@ const ofStream: Record<Quantity, (component: string) => string> = {
 /** "Total flow of 101", "Mass fraction of NaCl in 101". */
 export function placeName(
   state: BookState,
-  { streamId, quantity, componentId, instrument }: Omit<GivenPlace, 'caseId'>,
+  { streamId, quantity, componentId, measureId, instrument }: Omit<GivenPlace, 'caseId'>,
 ): string {
   const component = componentId === null ? '' : (state.component.get(componentId)?.tag ?? 'a removed component')
   const stream = state.stream.get(streamId)?.tag ?? 'a removed stream'
   const by = instrument === undefined || instrument === 'main' ? '' : ` by ${instrument}`
-  return `${ofStream[quantity](component)} ${stream}${by}`
+  const measure = measureId == null ? undefined : state.measure.get(measureId)
+  const what = ofStream[quantity]?.(component) ?? `${measure ? measureTitle(state, measure) : 'A removed row'} in`
+  return `${what} ${stream}${by}`
 }

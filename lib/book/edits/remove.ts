@@ -17,7 +17,7 @@ export const removeRules = (state: BookState, ids: readonly string[], makeId: Ma
 export const removeParameters = (state: BookState, ids: readonly string[], makeId: MakeId): Edit =>
   remove(state, 'parameter', ids, makeId)
 
-type Removable = 'stream' | 'component' | 'unit' | 'reaction' | 'rule' | 'parameter' | 'inventory'
+type Removable = 'stream' | 'component' | 'unit' | 'reaction' | 'rule' | 'parameter' | 'inventory' | 'measure'
 
 /** Removes records with all that leans on them: links, givens of every case, absences, coefficients, inventories, rules. */
 export function remove(state: BookState, kind: Removable, ids: readonly string[], makeId: MakeId): Edit {
@@ -64,9 +64,19 @@ export function goesWith(
       }
     }
     for (const rule of state.rule.values()) if (ruleFalls(state, rule, gone)) take(rule)
+    for (const id of emptiedMeasures(state, gone)) take(state.measure.get(id) as BookRecord)
   } while (added)
   const update = [...kept].filter(([id]) => !gone.get('stream')?.has(id)).map(([, entry]) => entry)
   return { removed, update }
+}
+
+/** Rows of which a group loses its last component. */
+function emptiedMeasures(state: BookState, gone: ReadonlyMap<Kind, ReadonlySet<string>>): Set<string> {
+  const losing = new Set<string>()
+  const left = new Set<string>()
+  for (const { id, measureId, side } of state.measurePart.values())
+    (gone.get('measurePart')?.has(id) ? losing : left).add(`${measureId}/${side}`)
+  return new Set([...losing].filter((group) => !left.has(group)).map((group) => group.split('/')[0] as string))
 }
 
 /** A formula that names what is gone, or "same composition" of fewer than two streams. */
@@ -98,6 +108,7 @@ const nouns: Record<Removable, string> = {
   rule: 'rule',
   parameter: 'parameter',
   inventory: 'inventory change',
+  measure: 'row',
 }
 
 /** Kinds worth naming in "with 4 givens, 2 connections". */
@@ -108,6 +119,7 @@ const named: [Kind, string][] = [
   ['coefficient', 'coefficient'],
   ['inventory', 'inventory change'],
   ['rule', 'rule'],
+  ['measure', 'row'],
 ]
 
 /** "4 givens, 2 connections and 1 rule", of records that go along; empty when nothing does. */
@@ -121,7 +133,7 @@ export function goesWithWords(removed: readonly BookRecord[], besides: Kind): st
 }
 
 function labelOf(kind: Removable, roots: readonly BookRecord[], removed: readonly BookRecord[]): string {
-  const tags = roots.map((root) => ('tag' in root ? root.tag : ''))
+  const tags = roots.map((root) => ('tag' in root ? root.tag : 'name' in root ? root.name : ''))
   const what =
     roots.length === 1 ? `${nouns[kind]} ${tags[0]}`.trim() : `${counted(roots.length, nouns[kind])} ${listed(tags)}`
   const along = goesWithWords(removed, kind)

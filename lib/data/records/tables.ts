@@ -1,6 +1,7 @@
 import { getTableColumns, getTableName } from 'drizzle-orm'
 import type { PgColumn, PgTable } from 'drizzle-orm/pg-core'
 import { given, operatingCase } from '@/db/schema/givens'
+import { measure, measurePart } from '@/db/schema/measures'
 import { coefficient, parameter, reaction, rule, ruleStream } from '@/db/schema/relations'
 import { absence, component, inventory, link, stream, unit } from '@/db/schema/structure'
 import { fieldsOf, type Kind, kindOrder } from '@/lib/book/kinds'
@@ -20,6 +21,8 @@ const tables = {
   parameter,
   rule,
   ruleStream,
+  measure,
+  measurePart,
   case: operatingCase,
   given,
 } satisfies Record<RowKind, PgTable>
