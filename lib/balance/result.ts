@@ -3,10 +3,10 @@ import {
   CellFlag,
   type CellFlagName,
   CellState,
+  type Check,
   type Conflict,
   type Diagnostic,
   type ExtentResult,
-  type Place,
   type Solution,
   type SolveStatus,
   type Summary,
@@ -27,16 +27,7 @@ export type ResultCell = {
   blockedBy?: number[]
 }
 
-export type Check = {
-  code: 'sum' | 'redundant' | 'checkOnly'
-  givens: Place[]
-  relations: string[]
-  by: number
-  tolerance: number
-  agrees: boolean
-}
-
-/** The result `tallybrook-result/1`. Boundaries, workings, checks and what to measure next are empty until they are built. */
+/** The result `tallybrook-result/1`. Boundaries, workings, and what to measure next are empty until they are built. */
 export type Result = {
   format: 'tallybrook-result/1'
   name: string
@@ -107,7 +98,7 @@ export function toResult(problem: Problem, solution: Solution): Result {
     workings: [],
     conflicts: solution.conflicts,
     ...(solution.conflictsTruncated && { conflictsTruncated: true }),
-    checks: [],
+    checks: solution.checks ?? [],
     measureNext: [],
     ...(solution.roots && { roots: solution.roots }),
     diagnostics: solution.diagnostics,

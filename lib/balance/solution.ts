@@ -67,6 +67,16 @@ export type Conflict = {
   code: string
 }
 
+/** A value or rule that the balance does not need, held against what the rest says. `by` and `tolerance` are in book units. */
+export type Check = {
+  code: 'sum' | 'redundant' | 'checkOnly'
+  givens: Place[]
+  relations: string[]
+  by: number
+  tolerance: number
+  agrees: boolean
+}
+
 export type Summary = {
   given: number
   solvable: number
@@ -113,6 +123,8 @@ export type Solution = {
   conflicts: Conflict[]
   /** More minimal sets exist than are listed. */
   conflictsTruncated?: boolean
+  /** Left out where nothing is checked. */
+  checks?: Check[]
   /** Where the rules can be met in several ways: unknown cells that have a value in each, with all of them, ascending. */
   roots?: { cells: (Place & { values: number[] })[] }
   diagnostics: Diagnostic[]
