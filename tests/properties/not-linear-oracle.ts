@@ -179,6 +179,10 @@ export class NotLinearOracle {
     )
   }
 
+  cell(key: string): OracleCell {
+    return this.cells.find((its) => its.key === key) as OracleCell
+  }
+
   get freedom(): number {
     return this.nullSpace(this.truth).length
   }

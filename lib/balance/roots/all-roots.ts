@@ -5,12 +5,14 @@ export type Signed = { sign: number; log: number }
 export type RootFound = { at: number; touches: boolean }
 
 /** Panels grow finer towards both ends, where branches without flow pull the function to 0 many times over. */
-const NEAR = [1e-6, 3e-6, 1e-5, 3e-5, 1e-4, 3e-4, 1e-3, 3e-3, 0.01, 0.03, 0.1, 0.3]
-const EDGES = [...NEAR, 0.5, ...NEAR.map((near) => 1 - near).reverse()]
+const NEAR = [1, 3.1, 9.7, 31, 97, 313, 971, 3109, 9719, 31_013, 97_171, 300_319].map((millionths) => millionths * 1e-6)
+const EDGES = [...NEAR, 0.500_713, ...NEAR.map((near) => 1 - near).reverse()]
 const DEGREE = 14
 const GRID = 140
 /** The polynomial stands for the function where it agrees to this part of the largest value on the panel. */
 const RESOLVED = 1e-8
+/** Panels reach this part of themselves into the next, so that no root is lost at the join. */
+const OVERLAP = 0.01
 /** A smallest value below this part of the panel's largest may be a root that only touches. */
 const TOUCHES = 1e-6
 const NARROWEST = 1e-10
@@ -26,7 +28,9 @@ export function allRoots(f: (z: number) => Signed, budget: number): RootFound[] 
   for (let k = EDGES.length - 1; k > 0; k--) panels.push([EDGES[k - 1] as number, EDGES[k] as number])
   let left = budget
   for (let panel = panels.pop(); panel; panel = panels.pop()) {
-    const [a, b] = panel
+    const [from, to] = panel
+    const reach = OVERLAP * (to - from)
+    const [a, b] = [Math.max(from - reach, from / 2), Math.min(to + reach, (1 + to) / 2)]
     left -= DEGREE + 3
     if (left < 0) return undefined
     const proxy = standInFor(f, a, b)
@@ -34,8 +38,8 @@ export function allRoots(f: (z: number) => Signed, budget: number): RootFound[] 
       roots.push(...within(f, proxy, a, b))
       continue
     }
-    const middle = (a + b) / 2
-    if (b - a > NARROWEST * Math.max(a, 1 - b, NARROWEST)) panels.push([middle, b], [a, middle])
+    const middle = (from + to) / 2
+    if (to - from > NARROWEST * Math.max(from, 1 - to)) panels.push([middle, to], [from, middle])
     // Too narrow to halve: a pole, or a root lost in rounding. It is looked at as a root, and refused if it is none.
     else roots.push({ at: middle, touches: true })
   }
@@ -140,7 +144,7 @@ function joined(roots: RootFound[]): RootFound[] {
   const kept: RootFound[] = []
   for (const root of roots.sort((a, b) => a.at - b.at)) {
     const last = kept[kept.length - 1]
-    if (last && root.at - last.at <= 1e-12 * root.at) last.touches &&= root.touches
+    if (last && root.at - last.at <= 1e-11 * root.at) last.touches &&= root.touches
     else kept.push({ ...root })
   }
   return kept

@@ -1,5 +1,5 @@
 import type { LinearForm } from '../measure/measure'
-import type { Model } from '../model'
+import { ColumnKind, type Model } from '../model'
 import { seededRandom } from '../random'
 import { allRoots } from './all-roots'
 import { type Dense, determinant, ROUNDING, reduce, SURE } from './dense'
@@ -44,20 +44,20 @@ export function isolate(model: Model, space: FreeSpace, { scalar, rules }: OneSc
   for (const value of [0.31, 0.64])
     for (const { form } of linesAt(value) ?? []) for (const column of form.columns) columns.add(column)
   if (columns.size === 0) return 'unsure'
-  const totals = streamsOf(rules).flatMap((s) =>
-    (model.totalColumn[s] as number) < 0 ? [] : [model.totalColumn[s] as number],
-  )
-  for (const column of totals) columns.add(column)
+  for (const s of streamsOf(rules))
+    if ((model.totalColumn[s] as number) >= 0) columns.add(model.totalColumn[s] as number)
   const list = [...columns].sort((a, b) => a - b)
+  const flows = list.filter((column) => (model.columnKind[column] as number) <= ColumnKind.otherTotal)
   if (!work.take(space.directions.length ** 2 * list.length)) return 'unsure'
   const local = localSpace(space, list)
   if (!local) return 'unsure'
 
   const random = seededRandom(77)
-  const generic = genericRank(linesAt, local, totals, space, random)
+  const rowsAt = rowsOf(rules, local)
+  const generic = genericRank(rowsAt, local, flows, space, random)
   if (generic === undefined) return 'unsure'
   if (generic === 'open') return 'open'
-  const minor = minorOf(linesAt, local, generic.size, generic.withConstant, random)
+  const minor = minorOf(rowsAt, local, generic.size, generic.withConstant, random)
   const candidates: { value: number; touches: boolean }[] = [0, 1].map((value) => ({ value, touches: false }))
   if (scalar.range !== 'part') candidates.pop()
   for (const sign of scalar.range === 'any' ? [1, -1] : [1]) {
@@ -73,7 +73,7 @@ export function isolate(model: Model, space: FreeSpace, { scalar, rules }: OneSc
   }
   const roots: ScalarRoot[] = []
   for (const { value, touches } of candidates.sort((a, b) => a.value - b.value)) {
-    const verdict = tryAt(linesAt(value), local)
+    const verdict = tryAt(linesAt(value), rowsAt(value), local)
     if (verdict === 'unsure') return 'unsure'
     if (verdict === 'no') continue
     const last = roots[roots.length - 1]
@@ -96,28 +96,54 @@ function streamsOf(rules: readonly ScalarRule[]): number[] {
   return rules.flatMap(({ item }) => (item.kind === 'composition' ? item.composition.streams : []))
 }
 
-type LinesAt = (value: number) => Line[] | undefined
+type Row = { entries: Float64Array; terms: number }
+type RowsAt = (value: number) => Row[] | undefined
+
+/** Rows of all rules at a value; those that change in proportion to it are worked out once. */
+function rowsOf(rules: readonly ScalarRule[], local: LocalSpace): RowsAt {
+  const parts = rules.map(({ lines, isProportional }): RowsAt => {
+    if (!isProportional) return (value) => lines([value])?.map(local.row)
+    const [at0, at1] = [lines([0])?.map(local.row) ?? [], lines([1])?.map(local.row) ?? []]
+    return (value) =>
+      at0.map((zero, i) => {
+        const one = at1[i] as Row
+        return {
+          entries: zero.entries.map((entry, k) => entry + value * ((one.entries[k] as number) - entry)),
+          terms: zero.terms + Math.abs(value) * one.terms,
+        }
+      })
+  })
+  return (value) => {
+    const rows: Row[] = []
+    for (const part of parts) {
+      const its = part(value)
+      if (!its) return undefined
+      rows.push(...its)
+    }
+    return rows
+  }
+}
 
 /** Rank of the rows at values taken at random: what a root makes smaller. */
 function genericRank(
-  linesAt: LinesAt,
+  rowsAt: RowsAt,
   local: LocalSpace,
-  totals: readonly number[],
+  flows: readonly number[],
   space: FreeSpace,
   random: () => number,
 ): { size: number; withConstant: boolean } | 'open' | undefined {
   let best: { size: number; withConstant: boolean } | 'open' | undefined
   for (let attempt = 0; attempt < 2; attempt++) {
-    const lines = linesAt(0.2 + 0.6 * random())
-    if (!lines) return undefined
-    const reduced = reduce(scaledRows(lines, local), local.nFree)
+    const rows = rowsAt(0.2 + 0.6 * random())
+    if (!rows) return undefined
+    const reduced = reduce(scaledRows(rows), local.nFree)
     if (!reduced.sure) return undefined
     const over = Math.max(0, ...reduced.rest.map((row) => Math.abs(row[local.nFree] as number)))
     if (over > ROUNDING && over < SURE) return undefined
     const here: typeof best =
       over > SURE
         ? { size: reduced.rank + 1, withConstant: true }
-        : totals.some((column) => isForcedToZero(column, reduced, local, space))
+        : flows.some((column) => isForcedToZero(column, reduced, local, space))
           ? { size: reduced.rank, withConstant: false }
           : 'open'
     if (best !== undefined && JSON.stringify(best) !== JSON.stringify(here)) return undefined
@@ -144,50 +170,48 @@ function isForcedToZero(
   return left.every((value) => Math.abs(value) <= SURE * size)
 }
 
-const scaledRows = (lines: readonly Line[], local: LocalSpace): Dense =>
-  lines.map(({ form }) => {
-    const { entries, terms } = local.row(form)
-    return [...entries].map((value) => (terms === 0 ? 0 : value / terms))
-  })
+const scaledRows = (rows: readonly Row[]): Dense =>
+  rows.map(({ entries, terms }) => [...entries].map((value) => (terms === 0 ? 0 : value / terms)))
 
 /** A random square combination of rows and columns, as a function of the scalar, and its determinant. */
 function minorOf(
-  linesAt: LinesAt,
+  rowsAt: RowsAt,
   local: LocalSpace,
   size: number,
   withConstant: boolean,
   random: () => number,
 ): (value: number, weight: number) => { sign: number; log: number } {
   const width = local.nFree + Number(withConstant)
-  const reference = [0.23, 0.57, 0.81].map((value) => linesAt(value)?.map(({ form }) => local.row(form).terms))
-  const nLines = Math.max(0, ...reference.map((its) => its?.length ?? 0))
-  const scale = Array.from({ length: nLines }, (_, i) => Math.max(...reference.map((its) => its?.[i] ?? 0)) || 1)
+  const reference = [0.23, 0.57, 0.81].map((value) => rowsAt(value)?.map(({ terms }) => terms))
+  const nRows = Math.max(0, ...reference.map((its) => its?.length ?? 0))
+  const scale = Array.from({ length: nRows }, (_, i) => Math.max(...reference.map((its) => its?.[i] ?? 0)) || 1)
   const mix = (n: number, m: number): number[][] | undefined =>
     n === m ? undefined : Array.from({ length: n }, () => Array.from({ length: m }, () => random() - 0.5))
-  const rowMix = mix(size, nLines)
+  const rowMix = mix(size, nRows)
   const columnMix = mix(size, width)
   return (value, weight) => {
-    const lines = linesAt(value)
-    if (!lines) return { sign: 0, log: Number.NEGATIVE_INFINITY }
-    let rows = lines.map(({ form }, i) => {
-      const { entries } = local.row(form)
-      const its = Array.from({ length: width }, (_, k) => ((entries[k] as number) * weight) / (scale[i] as number))
+    const rows = rowsAt(value)?.map(({ entries }, i) => {
+      const factor = weight / (scale[i] as number)
+      const its = Array.from({ length: width }, (_, k) => (entries[k] as number) * factor)
       return columnMix ? columnMix.map((mixed) => mixed.reduce((sum, m, k) => sum + m * (its[k] as number), 0)) : its
     })
-    if (rowMix)
-      rows = rowMix.map((mixed) =>
-        Array.from({ length: size }, (_, k) =>
-          mixed.reduce((sum, m, i) => sum + m * ((rows[i] as number[])[k] as number), 0),
-        ),
-      )
-    return determinant(rows)
+    if (!rows) return { sign: 0, log: Number.NEGATIVE_INFINITY }
+    if (!rowMix) return determinant(rows)
+    return determinant(
+      rowMix.map((mixed) => {
+        const sum = new Array<number>(size).fill(0)
+        for (const [i, m] of mixed.entries())
+          for (let k = 0; k < size; k++) sum[k]! += m * ((rows[i] as number[])[k] as number)
+        return sum
+      }),
+    )
   }
 }
 
 /** Independent rows where all can be met at this value, else 'no'; 'unsure' where it cannot be told. */
-function tryAt(lines: Line[] | undefined, local: LocalSpace): Line[] | 'no' | 'unsure' {
-  if (!lines) return 'no'
-  const reduced = reduce(scaledRows(lines, local), local.nFree)
+function tryAt(lines: Line[] | undefined, rows: Row[] | undefined, local: LocalSpace): Line[] | 'no' | 'unsure' {
+  if (!lines || !rows) return 'no'
+  const reduced = reduce(scaledRows(rows), local.nFree)
   const over = Math.max(0, ...reduced.rest.map((row) => Math.abs(row[local.nFree] as number)))
   if (over > DOUBT) return 'no'
   if (over > MET || !reduced.sure) return 'unsure'

@@ -19,6 +19,8 @@ export type ScalarRule = {
   scalars: Scalar[]
   /** undefined where the values make no sense, such as a division by 0. `values` in the order of `scalars`. */
   lines: (values: readonly number[]) => LinearForm[] | undefined
+  /** The lines change in proportion to the values. */
+  isProportional: boolean
 }
 
 /** More leaves of one formula than this are not tried as scalars. */
@@ -36,6 +38,7 @@ export function scalarRule(model: Model, knowledge: Knowledge, item: Pending): S
       return {
         item,
         scalars: [parameterScalar(item.parameter, range === 'notNegative' && isFlow(model, whole) ? 'part' : range)],
+        isProportional: true,
         lines: ([value = 0]) => [combine(1, numerator, -value, denominator), heldAt(item.parameter, value)],
       }
     }
@@ -80,6 +83,7 @@ function compositionRule(model: Model, knowledge: Knowledge, item: Pending & { k
   const key = (group: number[]): string => `part ${[...group].sort().join(' ')} of ${[...rest].sort().join(' ')}`
   return {
     item,
+    isProportional: true,
     scalars: open.slice(1).map((group) => ({ key: key(group), range: 'part' })),
     lines: (values) =>
       open
@@ -114,6 +118,7 @@ function formulaRule(model: Model, knowledge: Knowledge, item: Pending & { kind:
       continue
     return {
       item,
+      isProportional: false,
       scalars: chosen.map(({ scalar }) => scalar),
       lines: (values) => {
         const form = withValues(chosen, values)

@@ -71,7 +71,7 @@ export function linearisedAt(model: Model, branch: Branch, x: Float64Array, work
     const n = block.directions.length
     if (!work.take(n * n * n)) return undefined
     const directions = block.directions.map((q) => space.directions[q] as Float64Array)
-    const its = tangentRows(model, block, directions, x)
+    const its = tangentRows(block, directions, x)
     if (!its) return undefined
     rows.push(...its)
   }
