@@ -7,16 +7,17 @@ export const MOST_SETS = 20
 
 /**
  * The circuits in reduced form: each has a member of its own (its head) that no other has, so that the heads' complement
- * is a basis and each circuit a fundamental one of the matroid of members. Circuits of structure alone drop out.
+ * is a basis and each circuit a fundamental one of the matroid of members. Circuits of structure alone drop out, and so
+ * does a member whose weights cancel to the part `cancels` of themselves.
  */
-export function reduceCircuits(circuits: readonly Circuit[]): Circuit[] {
+export function reduceCircuits(circuits: readonly Circuit[], cancels?: number): Circuit[] {
   const reduced: { head: Member; circuit: Circuit }[] = []
   for (const start of circuits) {
     let circuit = start
     for (const { head, circuit: other } of reduced) {
       const weight = circuit.weight.get(head)
       if (weight !== undefined && weight !== 0)
-        circuit = combineCircuits(1, circuit, -weight / (other.weight.get(head) as number), other)
+        circuit = combineCircuits(1, circuit, -weight / (other.weight.get(head) as number), other, cancels)
     }
     let head: Member | undefined
     for (const [member, weight] of circuit.weight)
@@ -27,7 +28,7 @@ export function reduceCircuits(circuits: readonly Circuit[]): Circuit[] {
     for (const entry of reduced) {
       const weight = entry.circuit.weight.get(head)
       if (weight !== undefined && weight !== 0)
-        entry.circuit = combineCircuits(1, entry.circuit, -weight / pivot, circuit)
+        entry.circuit = combineCircuits(1, entry.circuit, -weight / pivot, circuit, cancels)
     }
     reduced.push({ head, circuit })
   }

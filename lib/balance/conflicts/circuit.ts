@@ -28,7 +28,13 @@ export type Circuit = {
 const NOISE = 1e-12
 
 /** A member whose weights cancel to this part of themselves takes no part. */
-const CANCELS = 1e-9
+export const CANCELS = 1e-9
+
+/** A row that misses by more than this part of itself does not hold, give or take rounding. */
+const MISSES = 1e-2
+
+/** A side of a row that cancels to less than this part of its terms compares nothing. */
+const BLURRED = 1e-6
 
 /** Rounding of a sum beside its terms, with room for long chains. */
 export const ROUNDING = 1e-13
@@ -121,12 +127,13 @@ export class Tracer {
     add(circuit.reach, member, factor * scale * (typed?.halfWidth ?? 0))
   }
 
-  private sizeAt(row: number, { value }: Vector): number {
+  /** Sums of the terms of a stored row with positive and with negative coefficients, and of their sizes. */
+  private partsAt(row: number, { value }: Vector): Parts {
     const { rows } = this.assembly
-    let size = 0
+    const parts = { plus: 0, minus: 0, size: 0 }
     for (let k = rows.start[row] as number; k < (rows.start[row + 1] as number); k++)
-      size += Math.abs((rows.value[k] as number) * (value[rows.column[k] as number] as number))
-    return size
+      addTerm(parts, rows.value[k] as number, value[rows.column[k] as number] as number)
+    return parts
   }
 
   /** A row that was turned linear rests on values known before; their members take part in proportion. */
@@ -135,13 +142,12 @@ export class Tracer {
     const round = [...this.resolved.rounds].reverse().find(({ firstRow }) => firstRow <= row)
     if (!round) return
     // Where the flows of the row are 0 now, they are weighed as they stood when the row was added.
-    const point = this.sizeAt(row, generic) > 0 ? generic : round.knowledge.generic
-    const size = this.sizeAt(row, point)
+    const point = this.partsAt(row, generic).size > 0 ? generic : round.knowledge.generic
+    const own = this.partsAt(row, point)
     for (const form of forms) {
       const rest = this.ofForm(round.knowledge.elimination, form)
       if (!rest) continue
-      const terms = evaluate(form, point).terms
-      const share = terms > 0 ? (factor * size) / terms : 0
+      const share = factor * proportion(own, partsOf(form, point))
       for (const [member, weight] of rest.weight) {
         add(circuit.weight, member, share * weight)
         add(this.parts, member, Math.abs(share * weight))
@@ -150,6 +156,39 @@ export class Tracer {
       for (const source of rest.structure) circuit.structure.add(source)
     }
   }
+}
+
+type Parts = { plus: number; minus: number; size: number }
+
+function addTerm(parts: Parts, coefficient: number, value: number): void {
+  const term = coefficient * value
+  if (coefficient > 0) parts.plus += term
+  else parts.minus += term
+  parts.size += Math.abs(term)
+}
+
+function partsOf(form: LinearForm, { value }: Vector): Parts {
+  const parts = { plus: 0, minus: 0, size: 0 }
+  form.columns.forEach((j, k) => {
+    addTerm(parts, form.coefficients[k] as number, value[j] as number)
+  })
+  return parts
+}
+
+/**
+ * How much a row changes for a change of the form that it rests on. Both are differences of the same kind (a flow less a
+ * ratio times another), so either side compares them; the side that cancels least in itself is taken.
+ */
+function proportion(own: Parts, rest: Parts): number {
+  if (rest.size === 0) return 0
+  const sharp = (a: number, b: number): number => Math.min(Math.abs(a) / own.size, Math.abs(b) / rest.size)
+  const plus = sharp(own.plus, rest.plus)
+  const minus = sharp(own.minus, rest.minus)
+  const closes = ({ plus, minus }: Parts): boolean =>
+    Math.abs(plus + minus) <= MISSES * Math.max(Math.abs(plus), Math.abs(minus))
+  // Far from where both hold, only their sizes can be compared.
+  if (!closes(own) || !closes(rest) || !(Math.max(plus, minus) > BLURRED)) return own.size / rest.size
+  return plus >= minus ? own.plus / rest.plus : own.minus / rest.minus
 }
 
 function add(map: Map<Member, number>, member: Member, value: number): void {
@@ -165,8 +204,8 @@ export function tension({ gap, terms, reach }: Circuit): number {
   return sum === 0 ? Number.POSITIVE_INFINITY : beyond / sum
 }
 
-/** a x left + b x right. */
-export function combineCircuits(a: number, left: Circuit, b: number, right: Circuit): Circuit {
+/** a x left + b x right; a member whose weights cancel to the part `cancels` of themselves drops out. */
+export function combineCircuits(a: number, left: Circuit, b: number, right: Circuit, cancels = CANCELS): Circuit {
   const weight = new Map<Member, number>()
   const reach = new Map<Member, number>()
   for (const [factor, from] of [
@@ -178,7 +217,7 @@ export function combineCircuits(a: number, left: Circuit, b: number, right: Circ
   }
   for (const member of [...weight.keys()]) {
     const terms = Math.abs(a * (left.weight.get(member) ?? 0)) + Math.abs(b * (right.weight.get(member) ?? 0))
-    if (Math.abs(weight.get(member) as number) > CANCELS * terms) continue
+    if (Math.abs(weight.get(member) as number) > cancels * terms) continue
     weight.delete(member)
     reach.delete(member)
   }

@@ -12,7 +12,7 @@ import type { Resolved } from '../states/resolved'
 import { type Circuit, Tracer } from './circuit'
 
 /** Members that together leave only a flow of 0 where a fraction or ratio of that flow is typed. */
-export type ForcedZero = { circuit: Circuit; stream: number | undefined }
+export type ForcedZero = { form: LinearForm; circuit: Circuit; stream: number | undefined }
 
 /**
  * A fraction or ratio says something only where there is a flow. Where ratios contradict each other (two compositions of
@@ -62,7 +62,7 @@ export function findForcedZero(
     // What rests on the ratios themselves names them; flows that only add up to 0 come second.
     const circuit = tracer.ofForm(homogeneous(false), form) ?? tracer.ofForm(homogeneous(true), form)
     if (!circuit || circuit.weight.size === 0) continue
-    return { circuit, stream: streamOf(model, form) }
+    return { form, circuit, stream: streamOf(model, form) }
   }
   return undefined
 }

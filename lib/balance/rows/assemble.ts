@@ -8,7 +8,7 @@ import type { Rule, Value } from '../problem'
 import { pushBalances } from './balances'
 import { pushDefinitions } from './definitions'
 import { type FractionClash, type GivenInUse, givensInUse, pushGivens } from './givens'
-import { type AssemblyOptions, memberOfRule } from './members'
+import { type AssemblyOptions, type Member, memberOfRule } from './members'
 import { RowStore } from './row-store'
 import { measuresOfRule } from './rules'
 
@@ -54,8 +54,24 @@ export function assemble(model: Model, options: AssemblyOptions = {}): Assembly 
     if (ruleInUse(rule) && !options.leaveOut?.has(memberOfRule(model, index)))
       pushRule(model, rows, pending, rule, rows.from({ type: 'rule', index }), options)
   })
+  for (const form of options.basis ?? []) rows.push(rows.from({ type: 'basis' }), form.columns, form.coefficients, 1)
   const nonNegative = model.columnKind.map((kind) => Number(kind <= ColumnKind.otherTotal))
   return { rows, pending, givens, clashes, nonNegative }
+}
+
+/** What each given and rule with a value was typed as, and what the rows take for it now. */
+export function typedMembers(
+  model: Model,
+  { rows, givens }: Assembly,
+): Map<Member, { typed: number; value: number; halfWidth: number }> {
+  const members = new Map<Member, { typed: number; value: number; halfWidth: number }>()
+  for (const { index, base, value, halfWidth } of givens) members.set(index, { typed: base, value, halfWidth })
+  rows.source.forEach((number, i) => {
+    const source = rows.sources[number]
+    const its = rows.typed[i]
+    if (its && source?.type === 'rule') members.set(memberOfRule(model, source.index), its)
+  })
+  return members
 }
 
 /** Streams of one composition: a component absent from one cannot be in the others; the rest waits until more is known. */
@@ -107,23 +123,32 @@ function pushRule(
     else {
       const { columns, coefficients, constant } = turned.form
       const measure: Measure = { numerator: { columns, coefficients, constant: 0 } }
-      const halfWidth = halfWidthOfRule(rule, constant)
-      rows.push(source, columns, coefficients, 0 - constant, { measure, value: 0 - constant, halfWidth })
+      const typed = 0 - constant
+      const value = adjusted?.get(memberInUse(model, rows, source)) ?? typed
+      rows.push(source, columns, coefficients, value, {
+        measure,
+        typed,
+        value,
+        halfWidth: halfWidthOfRule(rule, typed),
+      })
     }
     return
   }
   const typed = fixedRuleValue(model, rule.value)
-  const own = rows.sources[source]
-  const member = own?.type === 'rule' ? memberOfRule(model, own.index) : -1
-  const value = typed === undefined ? undefined : (adjusted?.get(member) ?? perturb(typed))
+  const value = typed === undefined ? undefined : (adjusted?.get(memberInUse(model, rows, source)) ?? perturb(typed))
   for (const measure of measuresOfRule(model, rule)) {
-    if (value !== undefined) rows.pushMeasure(source, measure, value, halfWidthOfRule(rule, value))
+    if (value !== undefined) rows.pushMeasure(source, measure, value, halfWidthOfRule(rule, typed ?? value), typed)
     else {
       const parameter = parameterColumn(model, rule.value)
       if (measure.denominator) pending.push({ kind: 'scaled', source, measure, parameter })
       else rows.pushMeasure(source, { numerator: difference(measure, parameter) }, 0, 0)
     }
   }
+}
+
+function memberInUse(model: Model, rows: RowStore, source: number): Member {
+  const own = rows.sources[source]
+  return own?.type === 'rule' ? memberOfRule(model, own.index) : -1
 }
 
 /** Without a half-width of its own a rule is held to a part of its value; a value of 0 to that part of 1. */

@@ -14,6 +14,8 @@ export type GivenInUse = {
   /** -1 for a total. */
   component: number
   typed: number
+  /** What deviations are counted from: what was typed, unless the person has it scaled. */
+  base: number
   value: number
   halfWidth: number
 }
@@ -40,7 +42,7 @@ export function givensInUse(
     if (component >= 0 && !model.present[stream]?.includes(component)) return
     const { value, halfWidth } = typedValue(model, given, largestFlow)
     const used = perturb && value !== 0 && value !== 1 ? perturb(value) : value
-    const entry: GivenInUse = { index, given, stream, component, typed: value, value: used, halfWidth }
+    const entry: GivenInUse = { index, given, stream, component, typed: value, base: used, value: used, halfWidth }
     givens.push(entry)
     if (!leaveOut?.has(index)) putInWhole(model, wholes, entry)
   })
@@ -109,6 +111,7 @@ function settleFractions(
   if (choice === 'scale' && sum > 0) {
     for (const entry of entries) {
       entry.value /= sum
+      entry.base = entry.value
       entry.halfWidth /= sum
     }
     return undefined
@@ -124,12 +127,12 @@ const isMain = (given: Given): boolean => (given.instrument ?? 'main') === 'main
 
 /** One row for each given in use, named by a source of its own; gives the source of each. */
 export function pushGivens(model: Model, rows: RowStore, givens: readonly GivenInUse[]): void {
-  for (const { index, given, stream, component, value, halfWidth } of givens) {
+  for (const { index, given, stream, component, base, value, halfWidth } of givens) {
     const measure = namedMeasure(model, stream, given)
     // A checked problem says 0 of what the stream cannot hold: nothing to add.
     if (!measure) continue
     const source = rows.from({ type: 'given', index })
-    const typed = { measure, value, halfWidth }
+    const typed = { measure, typed: base, value, halfWidth }
     if (component >= 0 && value === 1 && isRatio(given.quantity) && !given.without) {
       // The whole stream is this component: the others together are 0, so each of them is.
       const rest = others(model, stream, component, given.quantity)
@@ -138,7 +141,7 @@ export function pushGivens(model: Model, rows: RowStore, givens: readonly GivenI
     }
     const none = flowsAtZero(model, stream, measure, value)
     if (none) for (const column of none) rows.push(source, [column], [1], 0, typed)
-    else rows.pushMeasure(source, measure, value, halfWidth)
+    else rows.pushMeasure(source, measure, value, halfWidth, base)
   }
 }
 

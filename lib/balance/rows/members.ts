@@ -1,3 +1,4 @@
+import type { LinearForm } from '../measure/measure'
 import type { Model } from '../model'
 
 /** A given by its index, a rule by the number of givens plus its index: what can be at odds. */
@@ -13,4 +14,6 @@ export type AssemblyOptions = {
   scaleFractions?: boolean
   /** Changes every value but 0 and 1 a little, to tell what holds by chance of the numbers from what always holds. */
   perturb?: (value: number) => number
+  /** Flows held at 1: a block without any typed flow shows its gaps only at some flow. */
+  basis?: readonly LinearForm[]
 }

@@ -8,9 +8,10 @@ export type Source =
   | { type: 'definition'; stream: number }
   | { type: 'composition'; unit: string }
   | { type: 'zero' }
+  | { type: 'basis' }
 
-/** What was typed for a row that holds one measure at one value; kept for half-widths and for what the others imply. */
-export type Typed = { measure: Measure; value: number; halfWidth: number }
+/** What was typed for a row that holds one measure at `value`, which differs where rounding was settled; kept for half-widths and for what the others imply. */
+export type Typed = { measure: Measure; typed: number; value: number; halfWidth: number }
 
 /**
  * Rows `sum of value x column = rhs`, appended one after another and kept flat. `start[i]` to `start[i + 1]` are the
@@ -48,9 +49,9 @@ export class RowStore {
   }
 
   /** One measure held at one value: numerator - value x denominator = 0, or numerator = value. */
-  pushMeasure(source: number, measure: Measure, value: number, halfWidth: number): number {
+  pushMeasure(source: number, measure: Measure, value: number, halfWidth: number, typedValue = value): number {
     const { numerator, denominator } = measure
-    const typed: Typed = { measure, value, halfWidth }
+    const typed: Typed = { measure, typed: typedValue, value, halfWidth }
     if (!denominator)
       return this.push(source, numerator.columns, numerator.coefficients, value - numerator.constant, typed)
     const row = combine(1, numerator, -value, denominator)

@@ -4,7 +4,7 @@ import { type Knowledge, LOST } from './knowledge'
 export const CLOSES = 1e-9
 
 /** Dependent rows (numbered among the compiled rows) that do not hold, at a generic solution of the others. */
-export function openRows(knowledge: Knowledge): number[] {
+export function openRows(knowledge: Knowledge, closes = CLOSES): number[] {
   const { rows, dependent } = knowledge.elimination
   const { value, size } = knowledge.generic
   return dependent.filter((i) => {
@@ -19,6 +19,6 @@ export function openRows(knowledge: Knowledge): number[] {
       terms += Math.abs(term)
       made = Math.max(made, Math.abs(a) * (size[j] as number))
     }
-    return Math.abs(rest) > CLOSES * Math.max(terms, LOST * made)
+    return Math.abs(rest) > closes * Math.max(terms, LOST * made)
   })
 }
