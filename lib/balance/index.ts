@@ -1,7 +1,11 @@
 /** The face of the solver: a checked problem in, states and values out. Pure; runs in a worker, on the server and in scripts. */
+export type { Boundary } from './boundaries/boundary'
+export type { CountedBoundary } from './boundaries/count-boundary'
+export { equationName, type Overlap, overlapSentences } from './boundaries/overlap'
 export { atomicWeights } from './chemistry/atomic-weights'
 export { type Atoms, elementShare, molarMassOf, parseFormula } from './chemistry/chemical-formula'
 export { elementGaps, massGap } from './chemistry/reaction-balance'
+export { countBoundary, type ExplainOptions, type Explanation, explain } from './explain'
 export { type FormulaNode, leavesOf, type ParsedFormula, parseFormulaText } from './formula/parse-formula'
 export { measureKey, nameOf } from './measure/measure-name'
 export * from './measure/units-of-measure'
@@ -12,3 +16,4 @@ export type { MeasureClass, ReconciledMeasure, Reconciliation, Suspect } from '.
 export { type Result, type ResultCell, toResult } from './result'
 export * from './solution'
 export { solve } from './solve'
+export type { Find, Step, Use } from './workings/step'

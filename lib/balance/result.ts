@@ -1,3 +1,5 @@
+import type { Boundary } from './boundaries/boundary'
+import { type Explanation, plainBoundary } from './explain'
 import type { Problem, Quantity } from './problem'
 import {
   CellFlag,
@@ -13,6 +15,7 @@ import {
   slotOf,
 } from './solution'
 import { quantityOfCell } from './states/cells'
+import type { Step } from './workings/step'
 
 /** One cell of the result, as `npm run solve` prints it. */
 export type ResultCell = {
@@ -27,15 +30,15 @@ export type ResultCell = {
   blockedBy?: number[]
 }
 
-/** The result `tallybrook-result/1`. Boundaries, workings, and what to measure next are empty until they are built. */
+/** The result `tallybrook-result/1`. What to measure next is empty until it is built; boundaries and workings where explained. */
 export type Result = {
   format: 'tallybrook-result/1'
   name: string
   summary: Summary
   cells: ResultCell[]
   extents: ExtentResult[]
-  boundaries: never[]
-  workings: never[]
+  boundaries: Boundary[]
+  workings: Step[]
   conflicts: Conflict[]
   conflictsTruncated?: boolean
   checks: Check[]
@@ -52,8 +55,8 @@ const stateNames = {
   [CellState.atOdds]: 'atOdds',
 } as const
 
-/** The solution of a problem as plain JSON: cells of every stream that exist, then the rest. */
-export function toResult(problem: Problem, solution: Solution): Result {
+/** The solution of a problem as plain JSON: cells of every stream that exist, then the rest; workings where explained. */
+export function toResult(problem: Problem, solution: Solution, explanation?: Explanation): Result {
   const amplification = new Map(solution.amplification)
   const blockedBy = new Map(solution.blockedBy)
   const cells: ResultCell[] = []
@@ -66,12 +69,14 @@ export function toResult(problem: Problem, solution: Solution): Result {
     const flags = (Object.keys(CellFlag) as CellFlagName[]).filter((name) => bits & CellFlag[name])
     const factor = amplification.get(slot)
     const blocked = blockedBy.get(slot)
+    const step = explanation?.stepOfSlot[slot] ?? 0
     cells.push({
       stream: problem.streams[s]?.id as string,
       quantity: quantityOfCell({ problem }, quantity),
       ...(c >= 0 && { component: problem.components[c]?.id as string }),
       state: stateNames[state as keyof typeof stateNames],
       ...(!Number.isNaN(value) && { value }),
+      ...(step > 0 && { step }),
       ...(flags.length > 0 && { flags }),
       ...(factor !== undefined && { amplification: factor }),
       ...(blocked && { blockedBy: blocked }),
@@ -94,8 +99,8 @@ export function toResult(problem: Problem, solution: Solution): Result {
     summary: solution.summary,
     cells,
     extents: solution.extents,
-    boundaries: [],
-    workings: [],
+    boundaries: (explanation?.boundaries ?? []).map(plainBoundary),
+    workings: explanation?.workings ?? [],
     conflicts: solution.conflicts,
     ...(solution.conflictsTruncated && { conflictsTruncated: true }),
     checks: solution.checks ?? [],

@@ -8,6 +8,7 @@ import { findRoots } from './roots/find-roots'
 import { columnWithRoots, flagTouching, rootValues } from './roots/root-cells'
 import { rootDiagnostics } from './roots/root-diagnostics'
 import { fixedRuleValue, ruleInUse } from './rows/assemble'
+import { keepSettled } from './settled-of'
 import type { Solution } from './solution'
 import { findAmplified } from './states/amplification'
 import { emptyCells, fillCells } from './states/fill-cells'
@@ -51,7 +52,7 @@ function solveModel(model: Model, wanted: readonly MeasureName[]): Solution {
   const parameterFreedom = freedomWithin(model, counted.rows, [ColumnKind.parameter])
   const extentFreedom = freedomWithin(model, counted.rows, [ColumnKind.extent, ColumnKind.parameter]) - parameterFreedom
   const several = roots && rootValues(model, roots, cells)
-  return {
+  const solution: Solution = {
     status: settled.sets.length > 0 ? 'atOdds' : counts.unknown > 0 ? 'open' : 'solved',
     summary: {
       ...counts,
@@ -76,6 +77,7 @@ function solveModel(model: Model, wanted: readonly MeasureName[]): Solution {
       ...(roots ? rootDiagnostics(model, assembly, roots, cells) : []),
     ],
   }
+  return keepSettled(solution, { model, settled: linear })
 }
 
 /** Reactions whose extent a rule in use holds at a typed value. */

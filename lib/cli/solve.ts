@@ -1,4 +1,4 @@
-import { solve, toResult } from '@/lib/balance'
+import { explain, solve, toResult } from '@/lib/balance'
 import { answerFiles, refuse } from './problem-files'
 
 /** `npm run -s solve -- FILE…`: one JSON result a line for each good file, one line per fault of a bad one, exit 2 if any. */
@@ -9,4 +9,9 @@ const files = arguments_.filter((text) => !text.startsWith('--'))
 for (const option of options)
   if (option !== '--all-boundaries') refuse(option, 'option', 'is not known; --all-boundaries is')
 
-answerFiles(files, 'npm run -s solve -- FILE…', (problem) => toResult(problem, solve(problem)))
+const allBoundaries = options.includes('--all-boundaries')
+
+answerFiles(files, 'npm run -s solve -- FILE…', (problem) => {
+  const solution = solve(problem)
+  return toResult(problem, solution, explain(problem, solution, { allBoundaries }))
+})
