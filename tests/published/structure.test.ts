@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { type Problem, solve } from '@/lib/balance'
+import { type CountedBoundary, explain, overlapSentences, type Problem, solve } from '@/lib/balance'
 
 /**
  * Degrees of freedom by the rules of Felder & Rousseau, Elementary Principles of Chemical Processes, 3rd ed.,
@@ -136,5 +136,95 @@ describe('degrees of freedom', () => {
         ],
       ),
     ).toBe(2)
+  })
+})
+
+describe('boundaries', () => {
+  const boundaryOf = (problem: Problem, unit: string): CountedBoundary => {
+    const { boundaries } = explain(problem, solve(problem))
+    return boundaries.find(({ units }) => units.join() === unit) as CountedBoundary
+  }
+
+  it('a mixer of three components has three independent balances (section 4.3)', () => {
+    const mixer = book({ units: [{ id: 'M', kind: 'mixer' }], links: { M: { 1: 'in', 2: 'in', 3: 'out' } } })
+    const { overlaps, ...counts } = boundaryOf(mixer, 'M')
+    // Per stream a flow and three fractions; the fractions add up: 12 - 3 sums is the book's 9 flows.
+    expect(counts).toEqual({
+      units: ['M'],
+      crossing: ['1', '2', '3'],
+      unknowns: 12,
+      balances: 3,
+      sums: 3,
+      rules: 0,
+      degreesOfFreedom: 6,
+      independent: 6,
+      redundant: 0,
+      over: false,
+      status: 'short',
+    })
+    expect(overlaps).toEqual([])
+  })
+
+  it('a splitter of three components: five independent equations, four free (section 4.5)', () => {
+    const splitter = book({ units: [{ id: 'SP', kind: 'splitter' }], links: { SP: { 1: 'in', 2: 'out', 3: 'out' } } })
+    expect(boundaryOf(splitter, 'SP')).toMatchObject({ rules: 2, degreesOfFreedom: 4, independent: 8, redundant: 0 })
+  })
+
+  it('a splitter whose compositions are known keeps one of its balances (section 4.5)', () => {
+    const typed = book({
+      units: [{ id: 'SP', kind: 'splitter' }],
+      links: { SP: { 1: 'in', 2: 'out', 3: 'out' } },
+      givens: ['1', '2', '3'].flatMap((stream) =>
+        [0.2, 0.3, 0.5].map((value, c) => ({
+          stream,
+          quantity: 'massFraction' as const,
+          component: 'ABC'.charAt(c),
+          value,
+        })),
+      ),
+    })
+    const boundary = boundaryOf(typed, 'SP')
+    expect(boundary).toMatchObject({ unknowns: 3, balances: 3, sums: 0, rules: 2, independent: 1, redundant: 4 })
+    expect(overlapSentences(boundary.overlaps).join(' ')).toMatch(/B balance/)
+  })
+
+  it('an evaporator whose vapour has one component: two balances, and it can be worked (section 4.4)', () => {
+    const evaporator = book({
+      components: [{ id: 'S' }, { id: 'W' }],
+      streams: [{ id: 'F' }, { id: 'V', components: ['W'] }, { id: 'L' }],
+      units: [{ id: 'EV', kind: 'separator' }],
+      links: { EV: { F: 'in', V: 'out', L: 'out' } },
+      givens: [
+        { stream: 'F', quantity: 'flow', value: 100 },
+        { stream: 'F', quantity: 'massFraction', component: 'S', value: 0.1 },
+        { stream: 'L', quantity: 'massFraction', component: 'S', value: 0.4 },
+      ],
+    })
+    expect(boundaryOf(evaporator, 'EV')).toMatchObject({
+      balances: 2,
+      degreesOfFreedom: 0,
+      redundant: 0,
+      status: 'ready',
+    })
+  })
+
+  it('a reactor counts its extent, and by elements its atomic balances (Example 4.7-2)', () => {
+    const by = (balance: 'components' | 'elements'): CountedBoundary =>
+      boundaryOf(
+        book({
+          basis: 'mole',
+          flowUnit: 'kmol/h',
+          components: ['C3H8', 'C3H6', 'H2'].map((id) => ({ id, formula: id })),
+          streams: [{ id: 'ri', components: ['C3H8', 'C3H6'] }, { id: 'ro' }],
+          links: { RX: { ri: 'in', ro: 'out' } },
+          units: [{ id: 'RX', kind: 'reactor', balance }],
+          ...(balance === 'components' && {
+            reactions: [{ id: 'r1', unit: 'RX', stoichiometry: { C3H8: -1, C3H6: 1, H2: 1 } }],
+          }),
+        }),
+        'RX',
+      )
+    expect(by('components')).toMatchObject({ unknowns: 8, balances: 3, sums: 2, degreesOfFreedom: 3, independent: 5 })
+    expect(by('elements')).toMatchObject({ unknowns: 7, balances: 2, sums: 2, degreesOfFreedom: 3, independent: 4 })
   })
 })
