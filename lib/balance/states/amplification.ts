@@ -25,11 +25,25 @@ const MOST_WORK = 1e7
  * beyond `BLURRED` lose their value and become unknown, in place.
  */
 export function findAmplified(model: Model, settled: Settled, cells: CellArrays): Solution['amplification'] {
-  const amplification = amplifier(model, settled)
+  const changes = changesOf(settled)
+  const amplification = amplifier(model, settled, changes)
   const found: Solution['amplification'] = []
-  forEachCell(model, ({ slot, measure }) => {
+  // Each column at the generic solution and under the two changes; the totals of a stream come before what rests on them.
+  const points = [settled.resolved.knowledge.generic.value, ...changes]
+  const own = new Float64Array(points.length)
+  const total = new Float64Array(points.length)
+  const otherTotal = new Float64Array(points.length)
+  forEachCell(model, (cell) => {
+    const { slot, quantity, isFraction } = cell
+    if (quantity === 'flow') readAt(total, points, cell.column, 1)
+    else if (quantity === 'otherFlow') readSumAt(otherTotal, points, cell.measure.numerator)
+    else readAt(own, points, cell.column, cell.coefficient)
     if (cells.states[slot] !== CellState.solvable) return
-    const factor = amplification(measure, cells.values[slot] as number)
+    const value = cells.values[slot] as number
+    const top = quantity === 'flow' ? total : quantity === 'otherFlow' ? otherTotal : own
+    const bottom = isFraction ? (quantity === 'fraction' ? total : otherTotal) : undefined
+    if (!(moveOf(value, top, bottom) > SUSPECT)) return
+    const factor = amplification(cell.measure, value)
     if (factor === undefined) return
     found.push([slot, factor])
     cells.flags[slot]! |= CellFlag.amplified
@@ -41,34 +55,57 @@ export function findAmplified(model: Model, settled: Settled, cells: CellArrays)
 }
 
 /** Says of a measure at its value by how much its worst given moves it; undefined up to `AMPLIFIED`. */
-export function amplifier(model: Model, settled: Settled): (measure: Measure, value: number) => number | undefined {
+export function amplifier(
+  model: Model,
+  settled: Settled,
+  changes = changesOf(settled),
+): (measure: Measure, value: number) => number | undefined {
   const { resolved, assembly } = settled
   const { elimination: e, generic } = resolved.knowledge
-  const changes = randomChanges(assembly, resolved.knowledge, resolved.blur)
   const tracer = new Tracer(model, assembly, resolved)
+  const points = [generic.value, ...changes]
+  const top = new Float64Array(points.length)
+  const bottom = new Float64Array(points.length)
   let work = 0
   return (measure, value) => {
     if (value === 0 || (measure.denominator && value === 1)) return undefined
-    const { numerator, denominator } = measure
-    const size = Math.abs(denominator ? value * dot(denominator, generic.value) : value)
-    let factor = 0
-    for (const x of changes) {
-      const change = dot(numerator, x) - (denominator ? value * dot(denominator, x) : 0)
-      factor = Math.max(factor, Math.abs(change) / size)
-    }
+    readSumAt(top, points, measure.numerator)
+    if (measure.denominator) readSumAt(bottom, points, measure.denominator)
+    let factor = moveOf(value, top, measure.denominator && bottom)
     if (!(factor > SUSPECT)) return undefined
     const form = sensitive(measure, value)
+    const size = Math.abs(measure.denominator ? value * (bottom[0] as number) : value)
     work += e.rows.column.length
     if (work <= MOST_WORK) factor = worstGiven(model, tracer, settled, form, size) ?? factor
     return factor > AMPLIFIED ? factor : undefined
   }
 }
 
-function dot(form: LinearForm, x: Float64Array): number {
-  let sum = 0
-  for (let k = 0; k < form.columns.length; k++)
-    sum += (form.coefficients[k] as number) * (x[form.columns[k] as number] as number)
-  return sum
+const changesOf = ({ resolved, assembly }: Settled): Float64Array[] =>
+  randomChanges(assembly, resolved.knowledge, resolved.blur)
+
+/** Largest change of a measure beside its value; the first entry of `top` and `bottom` is at the generic solution, the others are changes. */
+function moveOf(value: number, top: Float64Array, bottom: Float64Array | undefined): number {
+  const size = Math.abs(bottom ? value * (bottom[0] as number) : value)
+  let most = 0
+  for (let p = 1; p < top.length; p++) {
+    const change = (top[p] as number) - (bottom ? value * (bottom[p] as number) : 0)
+    most = Math.max(most, Math.abs(change) / size)
+  }
+  return most
+}
+
+/** One column times a coefficient at every point; a column of -1 is 0. */
+function readAt(out: Float64Array, points: readonly Float64Array[], column: number, coefficient: number): void {
+  for (let p = 0; p < points.length; p++)
+    out[p] = column < 0 ? 0 : coefficient * ((points[p] as Float64Array)[column] as number)
+}
+
+function readSumAt(out: Float64Array, points: readonly Float64Array[], { columns, coefficients }: LinearForm): void {
+  out.fill(0)
+  for (let k = 0; k < columns.length; k++)
+    for (let p = 0; p < points.length; p++)
+      out[p]! += (coefficients[k] as number) * ((points[p] as Float64Array)[columns[k] as number] as number)
 }
 
 const sensitive = ({ numerator, denominator }: Measure, value: number) =>

@@ -1,38 +1,76 @@
 import { cellQuantityOn, quantityOn } from '../measure/cell-quantity'
-import type { LinearForm, Measure } from '../measure/measure'
-import { columnForm, otherPart, otherTotal, part, share } from '../measure/measure'
-import { hasOtherBasis, type Model } from '../model'
+import { columnForm, type LinearForm, type Measure, otherTotal } from '../measure/measure'
+import { hasOtherBasis, type Model, otherPerOwn } from '../model'
 import type { Quantity } from '../problem'
 import { type CellQuantity, slotOf } from '../solution'
 
-/** A cell of the table: where it stands, what it shows. Cells exist for present components only. */
-export type Cell = { slot: number; stream: number; component: number; quantity: CellQuantity; measure: Measure }
+/**
+ * A cell of the table: where it stands, what it shows. Cells exist for present components only. One object goes from
+ * cell to cell, so that a walk over 150,000 of them leaves nothing to collect: take out of it what is to be kept.
+ */
+export class Cell {
+  slot = 0
+  stream = 0
+  /** -1 for a total. */
+  component = -1
+  quantity: CellQuantity = 'flow'
+  /** The numerator is this column times this coefficient; -1 for an other total without a column of its own. */
+  column = -1
+  coefficient = 1
 
-/** Every cell that exists, stream by stream. The other basis' cells exist where all molar masses are known. */
+  constructor(private readonly model: Model) {}
+
+  /** True for the two fractions: their denominators are the totals of the stream, `flow` and `otherFlow`. */
+  get isFraction(): boolean {
+    return this.quantity === 'fraction' || this.quantity === 'otherFraction'
+  }
+
+  get measure(): Measure {
+    const numerator = this.quantity === 'otherFlow' ? this.otherTotal : columnForm(this.column, this.coefficient)
+    if (!this.isFraction) return { numerator }
+    return { numerator, denominator: this.quantity === 'fraction' ? this.total : this.otherTotal }
+  }
+
+  private get total(): LinearForm {
+    return columnForm(this.model.totalColumn[this.stream] as number)
+  }
+
+  private get otherTotal(): LinearForm {
+    return otherTotal(this.model, this.stream)
+  }
+}
+
+/**
+ * Every cell that exists, stream by stream, the flow before the fractions that rest on it. The other basis' cells exist
+ * where all molar masses are known.
+ */
 export function forEachCell(model: Model, visit: (cell: Cell) => void): void {
   const n = model.nComponents
+  const cell = new Cell(model)
+  const at = (quantity: CellQuantity, component: number, column: number, coefficient: number): void => {
+    cell.slot = slotOf(n, cell.stream, quantity, component)
+    cell.component = component
+    cell.quantity = quantity
+    cell.column = column
+    cell.coefficient = coefficient
+    visit(cell)
+  }
   for (let stream = 0; stream < model.nStreams; stream++) {
     const list = model.present[stream] as number[]
-    const cell = (quantity: CellQuantity, component: number, numerator: LinearForm, denominator?: LinearForm): void =>
-      visit({
-        slot: slotOf(n, stream, quantity, component),
-        stream,
-        component,
-        quantity,
-        measure: denominator ? { numerator, denominator } : { numerator },
-      })
-    const total = columnForm(model.totalColumn[stream] as number)
-    cell('flow', -1, total)
+    cell.stream = stream
+    at('flow', -1, model.totalColumn[stream] as number, 1)
     for (const c of list) {
-      cell('componentFlow', c, part(model, stream, c))
-      cell('fraction', c, share(model, stream, c).numerator, total)
+      const column = model.flowColumn[stream * n + c] as number
+      at('componentFlow', c, column, 1)
+      at('fraction', c, column, 1)
     }
     if (!hasOtherBasis(model, stream)) continue
-    const other = otherTotal(model, stream)
-    cell('otherFlow', -1, other)
+    at('otherFlow', -1, model.otherTotalColumn[stream] as number, 1)
     for (const c of list) {
-      cell('otherComponentFlow', c, otherPart(model, stream, c))
-      cell('otherFraction', c, otherPart(model, stream, c), other)
+      const column = model.flowColumn[stream * n + c] as number
+      const coefficient = otherPerOwn(model, c)
+      at('otherComponentFlow', c, column, coefficient)
+      at('otherFraction', c, column, coefficient)
     }
   }
 }

@@ -4,7 +4,8 @@ import { knownWithRoots } from '../roots/root-cells'
 import type { GivenInUse } from '../rows/givens'
 import { CellFlag, CellState, type Solution, slotOf, slotsPerStream } from '../solution'
 import { cellQuantityOf, forEachCell } from './cells'
-import type { Knowledge } from './knowledge'
+import { fixedIn, formValues, ratioIn, readColumn, readForm } from './form-values'
+import { type Knowledge, placesOf } from './knowledge'
 
 /** The flat arrays of a solution, all cells that do not exist `absent`. */
 export type CellArrays = Pick<Solution, 'states' | 'values' | 'flags'>
@@ -35,13 +36,15 @@ export function fillCells(
   const cells = emptyCells(model)
   const { states, values } = cells
   const local: number[] = []
-  forEachCell(model, ({ slot, measure, component, stream }) => {
-    const single = component >= 0 && measure.denominator && (model.present[stream] as number[]).length === 1
-    const known = single ? { value: 1, isLocal: false } : knownWithRoots(knowledge, roots, measure)
-    states[slot] = known === undefined ? CellState.unknown : CellState.solvable
-    if (known) values[slot] = known.value
-    if (known?.isLocal) local.push(slot)
-  })
+  if (roots)
+    forEachCell(model, ({ slot, measure, isFraction, stream }) => {
+      const single = isFraction && (model.present[stream] as number[]).length === 1
+      const known = single ? { value: 1, isLocal: false } : knownWithRoots(knowledge, roots, measure)
+      states[slot] = known === undefined ? CellState.unknown : CellState.solvable
+      if (known) values[slot] = known.value
+      if (known?.isLocal) local.push(slot)
+    })
+  else fillFromRows(model, knowledge, cells)
   for (const entry of inDisplayOrder(givens)) {
     const quantity = cellQuantityOf(model, entry.given.quantity)
     if (!quantity) continue
@@ -56,11 +59,38 @@ export function fillCells(
   return cells
 }
 
+/** What follows from linear rows alone, read without an object a cell. */
+function fillFromRows(model: Model, knowledge: Knowledge, { states, values }: CellArrays): void {
+  const places = placesOf(knowledge)
+  const own = formValues(places)
+  const total = formValues(places)
+  const otherTotal = formValues(places)
+  forEachCell(model, (cell) => {
+    const { slot, quantity } = cell
+    let value: number
+    if (quantity === 'flow') {
+      readColumn(total, cell.column, 1, places)
+      value = fixedIn(total)
+    } else if (quantity === 'otherFlow') {
+      readForm(otherTotal, cell.measure.numerator, places)
+      value = fixedIn(otherTotal)
+    } else if (cell.isFraction && (model.present[cell.stream] as number[]).length === 1) value = 1
+    else {
+      readColumn(own, cell.column, cell.coefficient, places)
+      value = !cell.isFraction ? fixedIn(own) : ratioIn(own, quantity === 'fraction' ? total : otherTotal)
+    }
+    states[slot] = Number.isNaN(value) ? CellState.unknown : CellState.solvable
+    values[slot] = value
+  })
+}
+
 /** The reading that a cell shows comes last: 'main', else the first instrument by name. */
 export function inDisplayOrder(givens: readonly GivenInUse[]): GivenInUse[] {
-  const rank = ({ given }: GivenInUse): string =>
-    given.instrument === undefined || given.instrument === 'main' ? '' : `~${given.instrument}`
-  return [...givens].sort((a, b) => (rank(a) < rank(b) ? 1 : rank(a) > rank(b) ? -1 : 0))
+  const isMain = ({ given }: GivenInUse): boolean => given.instrument === undefined || given.instrument === 'main'
+  const others = givens.filter((entry) => !isMain(entry))
+  const name = ({ given }: GivenInUse): string => given.instrument as string
+  others.sort((a, b) => (name(a) < name(b) ? 1 : name(a) > name(b) ? -1 : 0))
+  return [...others, ...givens.filter(isMain)]
 }
 
 function flagStream(model: Model, stream: number, { states, values, flags }: CellArrays): void {

@@ -1,12 +1,11 @@
 import type { LinearForm, Measure } from '../measure/measure'
 import { seededRandom } from '../random'
 import type { Elimination } from '../sparse/elimination'
-import { MOVES, probe, solveParticular, type Vector } from '../sparse/solve'
+import { probe, solveParticular, type Vector } from '../sparse/solve'
+import { type FormValues, fixedIn, formValues, LOST, type Places, ratioIn, readForm } from './form-values'
 
 const PROBES = 3
 const SEED = 20_240_611
-/** A denominator below this part of its terms is no flow at all. */
-const ZERO_DENOMINATOR = 1e-9
 
 /**
  * What the rows say: one generic solution and independent directions in which they leave it free. Everything else is a
@@ -59,9 +58,6 @@ function typicalSize({ rows }: Elimination): number {
   return count === 0 ? 1 : Math.exp(sum / count)
 }
 
-/** Digits lost in a difference count from here: a size that stands for a thousandth of a term. */
-export const LOST = 1e-3
-
 /**
  * Value of a form at a point and the terms to hold it against: those of the sum, or what its unknowns were made of where
  * they have lost digits. A direction leaves the constant out.
@@ -85,29 +81,25 @@ export function evaluate(
   return { value, terms: Math.max(terms, LOST * made) }
 }
 
+/** Where forms are read to see what is known. */
+export const placesOf = ({ generic, particular, probes }: Knowledge): Places => [generic, particular, ...probes]
+
+function read(form: LinearForm, places: Places): FormValues {
+  const values = formValues(places)
+  readForm(values, form, places)
+  return values
+}
+
 /** The value of a form where it is the same in every solution, else undefined. */
 export function fixedValue(knowledge: Knowledge, form: LinearForm): number | undefined {
-  for (const direction of knowledge.probes) {
-    const { value, terms } = evaluate(form, direction, true)
-    if (Math.abs(value) > MOVES * terms) return undefined
-  }
-  const { value, terms } = evaluate(form, knowledge.particular)
-  return Math.abs(value) <= 1e-11 * terms ? 0 : value
+  const value = fixedIn(read(form, placesOf(knowledge)))
+  return Number.isNaN(value) ? undefined : value
 }
 
 /** The value of a measure where every solution gives the same, else undefined. The ratio to a flow of 0 is unknown. */
-export function knownMeasure(knowledge: Knowledge, measure: Measure): number | undefined {
-  const { numerator, denominator } = measure
+export function knownMeasure(knowledge: Knowledge, { numerator, denominator }: Measure): number | undefined {
   if (!denominator) return fixedValue(knowledge, numerator)
-  const at = evaluate(denominator, knowledge.generic)
-  if (Math.abs(at.value) <= ZERO_DENOMINATOR * at.terms || at.value === 0) return undefined
-  const top = evaluate(numerator, knowledge.generic)
-  const ratio = Math.abs(top.value) <= 1e-11 * top.terms ? 0 : top.value / at.value
-  // The generic point holds the first probe, so that a particular solution off the ray shows in that probe.
-  for (const direction of knowledge.probes) {
-    const up = evaluate(numerator, direction, true)
-    const down = evaluate(denominator, direction, true)
-    if (Math.abs(up.value - ratio * down.value) > MOVES * (up.terms + Math.abs(ratio) * down.terms)) return undefined
-  }
-  return ratio
+  const places = placesOf(knowledge)
+  const ratio = ratioIn(read(numerator, places), read(denominator, places))
+  return Number.isNaN(ratio) ? undefined : ratio
 }

@@ -1,4 +1,5 @@
-import { type Knowledge, LOST } from './knowledge'
+import { LOST } from './form-values'
+import type { Knowledge } from './knowledge'
 
 /** A dependent row that closes to this part of the terms it is made of holds. */
 export const CLOSES = 1e-9
