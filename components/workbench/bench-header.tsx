@@ -79,6 +79,9 @@ export function BenchHeader({ book, view, desk, crumb, kept, downloadHref, child
             Components…
           </MenuItem>
           <MenuItem onSelect={() => desk.openDialog({ kind: 'add', what: 'unit', after: undefined })}>Units…</MenuItem>
+          <MenuItem onSelect={() => desk.openDialog({ kind: 'measure', id: null })}>
+            A row: dry basis, element or ratio…
+          </MenuItem>
           <MenuRule />
           <MenuItem onSelect={() => desk.openDialog({ kind: 'presence', streamId: null })}>
             Which components can be where…

@@ -32,6 +32,8 @@ export type DialogRequest =
   | { kind: 'add'; what: 'stream' | 'component' | 'unit'; after: string | null | undefined }
   | { kind: 'component'; id: string }
   | { kind: 'presence'; streamId: string | null }
+  /** null: a new row. */
+  | { kind: 'measure'; id: string | null }
 
 export function runner(editBook: (change: Change) => string | null): Desk['run'] {
   return (edit) => {

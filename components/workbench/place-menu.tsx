@@ -5,8 +5,9 @@ import type { GridRange } from '@/hooks/grid-model'
 import { NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
 import { moveAfter } from '@/lib/book/edits/fields'
 import { setPresence } from '@/lib/book/edits/presence'
-import { removeComponents, removeStreams, removeUnits } from '@/lib/book/edits/remove'
+import { remove, removeComponents, removeStreams, removeUnits } from '@/lib/book/edits/remove'
 import { absenceId, newId } from '@/lib/book/ids'
+import { type Measure, measureTitle } from '@/lib/book/measures'
 import type { BookView } from './book-view'
 import type { Desk } from './desk'
 import { readRow } from './rows'
@@ -28,6 +29,13 @@ export function PlaceMenu({ pane, range, view, desk }: PlaceMenuProps) {
       ? range.rows.flatMap((id) => {
           const ref = readRow(id)
           return ref?.kind === 'value' && ref.componentId !== null ? (state.component.get(ref.componentId) ?? []) : []
+        })
+      : []
+  const measures =
+    pane === 'table'
+      ? range.rows.flatMap((id) => {
+          const ref = readRow(id)
+          return ref?.kind === 'value' && ref.measureId !== null ? (state.measure.get(ref.measureId) ?? []) : []
         })
       : []
   const units = pane === 'links' ? range.rows.flatMap((id) => state.unit.get(id) ?? []) : []
@@ -81,6 +89,19 @@ export function PlaceMenu({ pane, range, view, desk }: PlaceMenuProps) {
             {uniqueCount(components) === 1
               ? `component ${components[0]?.tag}`
               : `${uniqueCount(components)} components`}
+          </MenuItem>
+        </>
+      ) : null}
+      {measures.length > 0 ? (
+        <>
+          <MenuItem onSelect={() => desk.openDialog({ kind: 'measure', id: measures[0]?.id ?? null })}>
+            What the row {measureTitle(state, measures[0] as Measure)} is of…
+          </MenuItem>
+          <MenuItem
+            danger
+            onSelect={() => desk.tryRun(remove(state, 'measure', [...new Set(measures.map(({ id }) => id))], newId))}
+          >
+            Remove {measures.length === 1 ? 'the row' : `${measures.length} rows`}
           </MenuItem>
         </>
       ) : null}

@@ -19,6 +19,7 @@ import { FractionNote } from './fraction-note'
 import { GivenDetails } from './given-details'
 import { NotUsed } from './not-used'
 import { otherUnits } from './other-units'
+import { ReadingsList } from './readings-list'
 
 type ValueCardProps = {
   view: BookView
@@ -94,17 +95,8 @@ export function ValueCard({ view, desk, stream, row }: ValueCardProps) {
         </Button>
       ) : null}
       {reading.given ? <GivenDetails key={reading.given.id} view={view} desk={desk} given={reading.given} /> : null}
-      {reading.others.length > 0 ? (
-        <CardSection title="Further readings">
-          <ul className="grid gap-1 text-sm">
-            {reading.others.map((other) => (
-              <li key={other.id}>
-                {other.text} by {other.instrument}{' '}
-                {other.source ? <span className="text-ink-3">{other.source}</span> : null}
-              </li>
-            ))}
-          </ul>
-        </CardSection>
+      {reading.given ? (
+        <ReadingsList view={view} desk={desk} stream={stream} row={row} others={reading.others} />
       ) : null}
     </>
   )

@@ -1,10 +1,12 @@
 'use client'
 
 import { Dialog } from '@/components/ui/dialog'
+import { measureTitle } from '@/lib/book/measures'
 import type { BookView } from '../book-view'
 import { ComponentFields } from '../card/component-card'
 import type { Desk, DialogRequest } from '../desk'
 import { AddForm, addWords } from './add-form'
+import { MeasureForm } from './measure-form'
 import { PresenceForm } from './presence-form'
 
 type BenchDialogsProps = { request: DialogRequest | null; view: BookView; desk: Desk; onShut: () => void }
@@ -32,6 +34,19 @@ export function BenchDialogs({ request, view, desk, onShut }: BenchDialogsProps)
         <PresenceForm view={view} desk={desk} streamId={request.streamId} />
       </Dialog>
     )
+  if (request.kind === 'measure') {
+    const measure = request.id === null ? undefined : view.state.measure.get(request.id)
+    if (request.id !== null && !measure) return null
+    return (
+      <Dialog
+        {...shared}
+        title={measure ? `Row ${measureTitle(view.state, measure)}` : 'Add a row'}
+        description="A measure of every stream: values can be typed in it like any other, and follow where they can."
+      >
+        <MeasureForm view={view} desk={desk} measure={measure} onDone={onShut} />
+      </Dialog>
+    )
+  }
   const component = view.state.component.get(request.id)
   if (!component) return null
   return (

@@ -3,11 +3,12 @@
 import { Trash2 } from 'lucide-react'
 import { IconButton } from '@/components/ui/button'
 import { renameTag, setFields } from '@/lib/book/edits/fields'
-import { setCoefficient } from '@/lib/book/edits/reactions'
+import { setCoefficient, setReactionText } from '@/lib/book/edits/reactions'
 import { removeReactions } from '@/lib/book/edits/remove'
 import { coefficientId, newId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
-import { formatNumber, plainNumber } from '@/lib/sheet/format'
+import { reactionText } from '@/lib/book/reaction-text'
+import { plainNumber } from '@/lib/sheet/format'
 import { readNumber } from '@/lib/sheet/read-number'
 import type { BookView } from '../book-view'
 import { CommitInput } from '../commit-input'
@@ -22,6 +23,7 @@ export function ReactionLine({ view, desk, reaction }: ReactionLineProps) {
   const problem = view.leftOut.get(reaction.id)
   const coefficient = (componentId: string) =>
     state.coefficient.get(coefficientId(reaction.id, componentId))?.value ?? 0
+  const coefficients = view.components.map(({ id }) => ({ componentId: id, value: coefficient(id) }))
   return (
     <li className="grid gap-2 px-4 py-2.5">
       <div className="flex flex-wrap items-end gap-2.5">
@@ -46,8 +48,14 @@ export function ReactionLine({ view, desk, reaction }: ReactionLineProps) {
           disabled={!mayEdit}
           onChoose={(unitId) => unitId && desk.tryRun(setFields(state, 'reaction', reaction.id, { unitId }, newId))}
         />
-        <p className="pb-1.5 font-mono text-sm">{equation(view, coefficient)}</p>
-        <span className="flex-1" />
+        <CommitInput
+          label="Equation"
+          className="min-w-72 flex-1 text-xs [&_input]:h-8 [&_input]:font-mono"
+          placeholder="2 H2 + O2 -> 2 H2O"
+          value={reactionText(coefficients, view.components, (value) => plainNumber(value, view.decimal))}
+          disabled={!mayEdit}
+          onCommit={(text) => desk.run(setReactionText(state, reaction.id, text, newId))}
+        />
         {mayEdit ? (
           <IconButton
             size="small"
@@ -82,20 +90,4 @@ export function ReactionLine({ view, desk, reaction }: ReactionLineProps) {
       </p>
     </li>
   )
-}
-
-/** "2 H2 + O2 → 2 H2O" */
-function equation(view: BookView, coefficient: (id: string) => number): string {
-  const side = (sign: 1 | -1) =>
-    view.components
-      .map(({ id, tag }) => ({ tag, size: coefficient(id) * sign }))
-      .filter(({ size }) => size > 0)
-      .map(({ tag, size }) =>
-        size === 1
-          ? tag
-          : `${formatNumber(size, 'flow', { typed: true, decimal: view.decimal }).replace(/[.,]00$/, '')} ${tag}`,
-      )
-      .join(' + ')
-  const [left, right] = [side(-1), side(1)]
-  return left || right ? `${left || '?'} → ${right || '?'}` : 'No coefficients yet'
 }

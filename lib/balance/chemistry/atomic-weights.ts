@@ -1,11 +1,12 @@
 /**
- * Abridged standard atomic weights, g/mol (IUPAC Commission on Isotopic Abundances and Atomic Weights, table of 2021;
- * Ar as revised in 2017, Zr in 2024). Five significant digits, conventional values where an interval is published.
+ * Abridged standard atomic weights, g/mol: IUPAC Commission on Isotopic Abundances and Atomic Weights (CIAAW), table of
+ * 2021, with Ar 39.95 as revised in 2017 and Zr 91.222 as revised in 2024. Five significant digits, conventional values
+ * where an interval is published.
  *
- * From memory, IUPAC abridged standard atomic weights, and not compared with a second table:
+ * How far each was checked. Al F P Mn Co As Se Mo Cd Au: as read in the IUPAC technical report of 2013 (abstract, doi
+ * 10.1515/pac-2015-0305). A further 36 agree to rounding with the IUPAC table of 1995, read in part, and with a second table.
+ * From memory, compared with nothing:
  * Be Sc Ga Ge Kr Rb Y Nb Ru Rh Pd In Te Xe Cs La Ce Pr Nd Sm Eu Gd Tb Dy Ho Er Tm Yb Lu Hf Ta Re Os Ir Tl Bi Th.
- * The other 46 agree with a second abridged table, itself written down from memory for the most part and
- * compared with the IUPAC technical report of 2013 (doi 10.1515/pac-2015-0305) where that could be read.
  */
 export const atomicWeights: Readonly<Record<string, number>> = {
   H: 1.008,

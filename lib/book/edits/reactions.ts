@@ -1,6 +1,7 @@
 import { type ComponentId, coefficientId, type ReactionId, type UnitId } from '../ids'
 import type { BookRecord, RecordOf } from '../kinds'
-import type { BookState } from '../state'
+import { readReaction } from '../reaction-text'
+import { type BookState, inOrder } from '../state'
 import { type Edit, edit, type MakeId, refuse, updateOf } from './draft'
 import { listedIn, nextTag, takenTags } from './tags'
 
@@ -28,6 +29,23 @@ export function addReaction(
   for (const [componentId, value] of coefficients)
     if (value !== 0) create.push(newCoefficient(reaction.id, componentId, value))
   return edit(state, makeId, `Add reaction ${reaction.tag} in ${state.unit.get(input.unitId)?.tag}`, { create })
+}
+
+/** Gives a reaction the coefficients that a text says: "2 H2 + O2 -> 2 H2O"; an empty text takes all of them out. */
+export function setReactionText(state: BookState, reactionId: ReactionId, text: string, makeId: MakeId): Edit {
+  const reaction = state.reaction.get(reactionId)
+  if (!reaction) return refuse('This reaction is no longer in the book.')
+  const read =
+    text.trim() === '' ? { ok: true as const, coefficients: [] } : readReaction(text, inOrder(state.component))
+  if (!read.ok) return refuse(read.what)
+  const wanted = new Map(read.coefficients.map(({ componentId, value }) => [componentId, value]))
+  const old = [...state.coefficient.values()].filter((its) => its.reactionId === reactionId)
+  const standing = new Set(old.map(({ componentId }) => componentId))
+  return edit(state, makeId, `Reaction ${reaction.tag}: ${text.trim() || 'cleared'}`, {
+    create: [...wanted].filter(([id]) => !standing.has(id)).map(([id, value]) => newCoefficient(reactionId, id, value)),
+    update: old.map((its) => updateOf(its, { value: wanted.get(its.componentId) ?? its.value })),
+    remove: old.filter(({ componentId }) => !wanted.has(componentId)),
+  })
 }
 
 /** Sets a stoichiometric coefficient; 0 or null takes the component out of the reaction. */
