@@ -1,3 +1,4 @@
+import type { MeasureName } from '@/lib/balance/problem'
 import type { Place } from '@/lib/balance/solution'
 import type { LeftOut } from '@/lib/book/problem-draft'
 import type { BookState } from '@/lib/book/state'
@@ -81,8 +82,15 @@ const statusWords = {
 
 const capital = (text: string): string => `${text[0]?.toUpperCase() ?? ''}${text.slice(1)}`
 
-const placeInWords = ({ stream, quantity, component, instrument }: Place): string =>
-  `${quantityWords[quantity]}${component === undefined ? '' : ` of ${component}`} of stream ${stream}${instrument === undefined || instrument === 'main' ? '' : ` by ${instrument}`}`
+const placeInWords = ({ stream, instrument, ...name }: Place): string =>
+  `${measureInWords(name)} of stream ${stream}${instrument === undefined || instrument === 'main' ? '' : ` by ${instrument}`}`
+
+/** "mass ratio of Water to Ore + Slag", "dry mass fraction of NaCl without Water". */
+function measureInWords({ quantity, component, element, parts, over, without }: MeasureName): string {
+  const of = component ?? element ?? parts?.join(' + ')
+  const under = over ? ` to ${over.join(' + ')}` : without ? ` without ${without.join(' + ')}` : ''
+  return `${quantityWords[quantity]}${of === undefined ? '' : ` of ${of}`}${under}`
+}
 
 const short = (value: number): string => String(Number(value.toPrecision(6)))
 

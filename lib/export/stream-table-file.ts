@@ -17,7 +17,7 @@ export type StreamTableRequest = {
 
 /** Solves one operating case and writes its workbook. Seconds of work for a large book: see `streamTableOffThread`. */
 export async function streamTableFile(request: StreamTableRequest): Promise<Uint8Array<ArrayBuffer>> {
-  const { problem, leftOut } = toProblem(request.state, request.caseId)
-  const solution = solve(problem)
-  return streamTableWorkbook({ ...request, solved: { problem, solution }, leftOut, engineVersion })
+  const { problem, leftOut, wanted, rows } = toProblem(request.state, request.caseId)
+  const solution = solve(problem, wanted)
+  return streamTableWorkbook({ ...request, solved: { problem, solution, rows }, leftOut, engineVersion })
 }

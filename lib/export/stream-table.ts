@@ -1,3 +1,4 @@
+import { parseFractionUnit } from '@/lib/balance/measure/units-of-measure'
 import { buildModel, hasOtherBasis, type Model } from '@/lib/balance/model'
 import type { Problem } from '@/lib/balance/problem'
 import {
@@ -7,8 +8,11 @@ import {
   CellState,
   type Solution,
   slotOf,
+  type WantedMeasures,
 } from '@/lib/balance/solution'
+import { measureTitle } from '@/lib/book/measures'
 import { type BookState, inOrder } from '@/lib/book/state'
+import { unitKindOf } from '@/lib/book/units'
 import {
   type CarriedRow,
   componentLabel,
@@ -23,13 +27,14 @@ import {
 /** Common practice: three or four figures are shown, all are kept. */
 export const SHOWN_FIGURES = 4
 
-export type Solved = { problem: Problem; solution: Solution }
+/** `rows`: the record, or 'volumeFlow', behind each measure of `solution.wanted`. */
+export type Solved = { problem: Problem; solution: Solution; rows?: readonly string[] }
 
 /**
  * The stream table of one operating case as it is handed out: every row with its unit, and a state for every cell.
  * `problem` and `solution` belong together and to the book as it stands: their streams and components are in book order.
  */
-export function streamTable(state: BookState, { problem, solution }: Solved): StreamTable {
+export function streamTable(state: BookState, { problem, solution, rows = [] }: Solved): StreamTable {
   const model = buildModel(problem)
   if (!model) throw new Error(`The flow unit ${problem.flowUnit} does not fit a ${problem.basis} basis`)
   const own = problem.basis === 'mass' ? model.units.mass : model.units.mole
@@ -53,6 +58,8 @@ export function streamTable(state: BookState, { problem, solution }: Solved): St
   ]
   const volume = volumeRow(problem, blocks, model.units.mass.factor, model.units.volume.symbol)
   if (volume) blocks.push({ title: 'Volume flow', rows: [volume] })
+  const added = measureRows(state, model, solution, rows)
+  if (added.length > 0) blocks.push({ title: 'Further measures', rows: added })
   const { given, solvable, unknown, atOdds } = solution.summary
   return {
     basis: problem.basis,
@@ -106,9 +113,31 @@ function rowMaker(model: Model, problem: Problem, solution: Solution): RowMaker 
     }))
 }
 
+/** Rows that people added, each in its own unit. */
+function measureRows(state: BookState, model: Model, { wanted }: Solution, ids: readonly string[]): ExportRow[] {
+  if (!wanted) return []
+  return ids.flatMap((id, index): ExportRow[] => {
+    const measure = state.measure.get(id)
+    if (!measure) return []
+    const scale = 1 / (parseFractionUnit(measure.unit)?.factor ?? 1)
+    const ofMass = unitKindOf(measure.quantity, model.problem.basis) === 'massFraction'
+    const words: Record<string, string> = ofMass ? { 1: 'kg/kg', '%': 'wt %' } : { 1: 'mol/mol', '%': 'mol %' }
+    return [
+      {
+        measure: 'measure',
+        component: index,
+        label: measureTitle(state, measure),
+        unit: words[measure.unit] ?? measure.unit,
+        digits: SHOWN_FIGURES,
+        cells: model.problem.streams.map((_, stream) => cellAt(wanted, index * model.nStreams + stream, scale)),
+      },
+    ]
+  })
+}
+
 const isPercent = (measure: RowMeasure): boolean => measure === 'fraction' || measure === 'otherFraction'
 
-function cellAt({ states, values, flags }: Solution, slot: number, scale: number): ExportCell {
+function cellAt({ states, values, flags }: WantedMeasures, slot: number, scale: number): ExportCell {
   const value = values[slot] ?? Number.NaN
   const marks = flagNames(flags[slot] ?? 0)
   const known = (state: 'given' | 'solvable' | 'atOdds'): ExportCell =>

@@ -14,10 +14,11 @@ export type RowMeasure =
   | 'otherFraction'
   | 'otherComponentFlow'
   | 'volumeFlow'
+  | 'measure'
 
 export type ExportRow = {
   measure: RowMeasure
-  /** Index into `StreamTable.components`; null for totals. */
+  /** Index into `StreamTable.components`, of a measure that people added its place among those; null for totals. */
   component: number | null
   label: string
   /** Values are in this unit: fractions in per cent. */
