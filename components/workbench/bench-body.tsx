@@ -14,6 +14,7 @@ import type { BookView } from './book-view'
 import { CellCard } from './card/cell-card'
 import type { Desk } from './desk'
 import { NotesPanel, noteLines } from './notes-panel'
+import { ChecksPanel } from './odds/checks-panel'
 import { OddsPanel } from './odds/odds-panel'
 import { Legend, type PanelKey, PanelTabs } from './panel-tabs'
 import type { RulesDraft } from './rules/rules-as-text'
@@ -81,7 +82,7 @@ export function BenchBody(props: BenchBodyProps) {
                       connections: view.plant.length,
                       rules: view.state.rule.size + view.state.reaction.size,
                       odds: view.solved?.solution.conflicts.length ?? 0,
-                      checks: 0,
+                      checks: view.solved?.solution.checks?.length ?? 0,
                       notes: noteLines(view).length,
                     }}
                     onChoose={props.onPanel}
@@ -107,6 +108,7 @@ export function BenchBody(props: BenchBodyProps) {
                     {panel === 'rules' ? (
                       <RulesPanel view={view} desk={desk} draft={rulesDraft} onDraft={setRulesDraft} />
                     ) : null}
+                    {panel === 'checks' ? <ChecksPanel view={view} desk={desk} /> : null}
                     {panel === 'odds' ? <OddsPanel view={view} desk={desk} /> : null}
                     {panel === 'notes' ? <NotesPanel view={view} onStream={props.onStream} /> : null}
                     {panel === 'connections' && view.plant.length > 0 ? (

@@ -182,7 +182,21 @@ export function flagWords(flags: number): string[] {
   if (flags & CellFlag.aboveOne) words.push('The fraction is above 1: look for a wrong given.')
   if (flags & CellFlag.amplified) words.push('A small error in a given makes a large one here.')
   if (flags & CellFlag.weak) words.push('The uncertainty of this value is large.')
-  if (flags & CellFlag.localOnly) words.push('This is one root; others may exist.')
+  if (flags & CellFlag.localOnly)
+    words.push('It was found by search from several starts: it fits, but that nothing else fits is not proved.')
   if (flags & CellFlag.zeroFlow) words.push('The stream has no flow.')
   return words
+}
+
+/** The same for one cell, with how much an error in a given grows on its way here. */
+export function noteWords(
+  view: BookView,
+  flags: number,
+  amplification: number | undefined,
+  hasValue: boolean,
+): string[] {
+  if (amplification === undefined) return flagWords(flags)
+  const times = formatNumber(Number(amplification.toPrecision(2)), 'flow', { decimal: view.decimal })
+  const grows = `A relative error in its worst given comes out about ${times} times as large here: ${hasValue ? 'measure it more directly, or do not lean on it' : 'too large for a value to mean anything'}.`
+  return [grows, ...flagWords(flags & ~CellFlag.amplified)]
 }

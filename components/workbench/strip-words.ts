@@ -16,7 +16,7 @@ export function stripWords(view: BookView): StripWords {
     return say(`Start by adding ${wanted.join(' and ')}:`, 'type them, or paste a list with one on each line.')
   }
   if (!solved) return say('Working out what follows …')
-  const { summary, status, conflicts, flags } = solved.solution
+  const { summary, status, conflicts, flags, roots } = solved.solution
   const { given, solvable, unknown, degreesOfFreedom: wanted, freeScale } = summary
   if (status === 'gaveUp') return say('The solver gave up on this table.', 'See the notes for the reason.', true)
   if (status === 'atOdds' || summary.atOdds > 0) {
@@ -27,6 +27,11 @@ export function stripWords(view: BookView): StripWords {
     const which = members.length > 0 ? `${listed(members, 6)} cannot all hold.` : 'Some givens cannot all hold.'
     return say(sentence(which), 'Correct one, withdraw it, or keep it as a check only.', true)
   }
+  const solutions = Math.max(0, ...(roots?.cells ?? []).map(({ values }) => values.length))
+  const several =
+    solutions > 1
+      ? ` ${solutions} solutions fit what is given: a cell that differs between them lists its values on its card.`
+      : ''
   const follow = `${counted(solvable, 'cell')} ${verb(solvable, 'follows', 'follow')}`
   const from = `from ${given} given.`
   const negative = flags.reduce((sum, bits) => sum + (bits & CellFlag.negative ? 1 : 0), 0)
@@ -40,5 +45,5 @@ export function stripWords(view: BookView): StripWords {
   const scale = block
     ? ` No flow is typed among ${listed(block, 4)}: their flows are known only up to a common factor, so type one of them to set the basis.`
     : ''
-  return say(follow, `${rest}${scale}${doubt}`, negative > 0)
+  return say(follow, `${rest}${several}${scale}${doubt}`, negative > 0)
 }

@@ -69,7 +69,7 @@ export function ConflictList({ view, desk, stream, row }: ConflictListProps) {
 }
 
 /** Leads to the cell of the member; a rule has none. */
-export function MemberName({ desk, member }: { desk: Desk; member: OddsMember }) {
+export function MemberName({ desk, member }: { desk: Desk; member: Pick<OddsMember, 'place' | 'name'> }) {
   const { place, name } = member
   if (!place) return <>{name}</>
   return (

@@ -5,12 +5,12 @@ import { Select } from '@/components/ui/select'
 import { setGivenDetails } from '@/lib/book/edits/givens'
 import { newId } from '@/lib/book/ids'
 import { type RecordOf, sourceKinds } from '@/lib/book/kinds'
-import { bookUnitOf } from '@/lib/book/units'
 import { plainNumber } from '@/lib/sheet/format'
 import { readNumber } from '@/lib/sheet/read-number'
 import type { BookView } from '../book-view'
 import { CommitInput } from '../commit-input'
 import type { Desk } from '../desk'
+import { givenUnit, readWidth, SigmaInput } from '../odds/sigma-input'
 import { sentence } from '../words'
 import { CardSection } from './card-parts'
 
@@ -32,8 +32,7 @@ const kindWords: Record<NonNullable<Given['sourceKind']>, string> = {
 /** Where a given comes from, how sure it is, and how it is used. */
 export function GivenDetails({ view, desk, given }: { view: BookView; desk: Desk; given: Given }) {
   const { state, mayEdit } = view
-  const bare = given.unit ?? bookUnitOf(given.quantity, view.book.basis, view.book.flowUnit) ?? ''
-  const unit = bare === '1' ? 'of 1' : bare
+  const unit = givenUnit(view, given)
   const set = (details: Parameters<typeof setGivenDetails>[2]) =>
     desk.run(setGivenDetails(state, given.id, details, newId))
   if (!mayEdit)
@@ -43,6 +42,11 @@ export function GivenDetails({ view, desk, given }: { view: BookView; desk: Desk
           {[given.sourceKind && sentence(kindWords[given.sourceKind]), given.source, given.note]
             .filter(Boolean)
             .join(' · ') || 'Not said'}
+        </p>
+        <p>
+          {given.halfWidth === null
+            ? 'Taken as exact'
+            : `Rounded to ± ${plainNumber(given.halfWidth, view.decimal)} ${unit}`}
         </p>
         <p>
           {given.sigma === null
@@ -89,18 +93,16 @@ export function GivenDetails({ view, desk, given }: { view: BookView; desk: Desk
       <CardSection title="How sure, and how used">
         <div className="grid gap-2.5">
           <CommitInput
-            label={`Uncertainty (one standard deviation), ${unit}`}
+            label={`Half-width of its rounding, ${unit}`}
+            hint={widthHint(view, given, unit)}
             inputMode="decimal"
-            value={given.sigma === null ? '' : plainNumber(given.sigma, view.decimal)}
+            value={given.halfWidth === null ? '' : plainNumber(given.halfWidth, view.decimal)}
             onCommit={(text) => {
-              if (text.trim() === '') return set({ sigma: null })
-              const number = readNumber(text.replace(/^\s*±\s*/, ''), view.decimal)
-              if (!number.ok) return number.reason
-              if (number.rest !== '' && number.rest !== unit)
-                return `The uncertainty is in ${unit}: type the number alone.`
-              return set({ sigma: number.value })
+              const width = readWidth(text, unit, view.decimal, 'half-width')
+              return typeof width === 'string' ? width : set({ halfWidth: width })
             }}
           />
+          <SigmaInput view={view} desk={desk} given={given} />
           <Field label="Use">
             {(describing) => (
               <Select
@@ -120,4 +122,12 @@ export function GivenDetails({ view, desk, given }: { view: BookView; desk: Desk
       </CardSection>
     </>
   )
+}
+
+/** "Its digits say ± 0.005 %. Left empty, it is taken as exact." */
+function widthHint(view: BookView, given: Given, unit: string): string {
+  const typed = readNumber(given.text, view.decimal)
+  const exact = 'Left empty, the value is taken as exact.'
+  if (!typed.ok || typed.halfWidth === null) return exact
+  return `Its digits say ± ${plainNumber(typed.halfWidth, view.decimal)} ${unit}. ${exact}`
 }

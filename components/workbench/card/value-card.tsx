@@ -7,13 +7,14 @@ import { setPresence } from '@/lib/book/edits/presence'
 import { newId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
 import { type BookView, rowUnit, titleOfRow } from '../book-view'
-import { flagWords, isDoubtful, keptWords, type Reading, readCell, shownNumber } from '../cell-reading'
+import { keptWords, type Reading, readCell, shownNumber } from '../cell-reading'
 import { CommitInput } from '../commit-input'
 import type { Desk } from '../desk'
 import { type RowPlace, rowIdOf } from '../rows'
 import { readTyped } from '../table-edits'
 import { sentence } from '../words'
 import { CardHead, CardSection, StateTag } from './card-parts'
+import { CellNotes } from './cell-notes'
 import { ConflictList } from './conflict-list'
 import { FractionNote } from './fraction-note'
 import { GivenDetails } from './given-details'
@@ -49,16 +50,7 @@ export function ValueCard({ view, desk, stream, row }: ValueCardProps) {
         {reading.kept ? <Tag>{sentence(keptWords[reading.kept])}</Tag> : null}
         {reading.value === null ? null : otherUnits(view, row, reading.value).join(' · ')}
       </p>
-      {reading.reason || reading.flags ? (
-        <div
-          className={`mt-3 grid gap-1 rounded-control px-3 py-2 text-sm ${isTrouble(reading) ? 'bg-odds' : 'bg-rail'}`}
-        >
-          {reading.reason ? <p>{reading.reason}</p> : null}
-          {flagWords(reading.flags).map((word) => (
-            <p key={word}>{word}</p>
-          ))}
-        </div>
-      ) : null}
+      <CellNotes view={view} desk={desk} stream={stream} row={rowIdOf(row)} reading={reading} />
       <ConflictList view={view} desk={desk} stream={stream} row={row} />
       <FractionNote view={view} desk={desk} stream={stream} row={row} reading={reading} />
       <NotUsed view={view} desk={desk} row={row} reading={reading} />
@@ -101,8 +93,6 @@ export function ValueCard({ view, desk, stream, row }: ValueCardProps) {
     </>
   )
 }
-
-const isTrouble = (reading: Reading): boolean => reading.reason !== null || isDoubtful(reading.flags)
 
 function noValue(reading: Reading): string {
   if (reading.state === 'absent') return 'Not in this stream'

@@ -86,7 +86,8 @@ function meetingPlace(view: BookView, { boundary, stream, component, code }: Con
 
 type Clash = Omit<OddsMember, 'settles'>
 
-function givenMember(view: BookView, given: Conflict['givens'][number]): Clash {
+/** A place of the solver with three numbers of it, in the unit of its row. */
+export function givenMember(view: BookView, given: Conflict['givens'][number]): Clash {
   const { basis, flowUnit } = view.book
   const row = rowOfPlace(view, given)
   const stream = streamId(view, given.stream)
