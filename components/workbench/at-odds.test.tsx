@@ -30,7 +30,7 @@ describe('what is at odds', () => {
     expect(strip()).toContain('cannot all hold')
     await user.click(screen.getByRole('button', { name: 'See what is at odds' }))
     const set = within(panel().getByRole('region', { name: 'Conflict 1' }))
-    expect(set.getByRole('heading')).toHaveTextContent('round T-101, E-102, C-103, S-104, M-105, D-106')
+    expect(set.getByRole('heading')).toHaveTextContent(/round T-101, .*D-106/)
     expect(set.getAllByRole('listitem')).toHaveLength(11)
     const weigher = set.getByRole('button', { name: 'Total flow of 112' }).closest('li')
     expect(plain(weigher?.textContent)).toContain(

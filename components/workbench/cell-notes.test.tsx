@@ -139,7 +139,7 @@ describe('checks', () => {
     expect(lines[0]).toBe(
       'Total flow of 1, kept as a check only: does not agree, off by −12.50 kg/h, allowed ± 0.50 kg/h.Total flow of 1',
     )
-    expect(lines[1]).toContain('Total flow of 3 also follows from the rest: agrees, off by +0.200 kg/h')
+    expect(lines[1]).toContain('Total flow of 3 also follows from the rest: agrees, off by +0.20 kg/h')
     expect(lines[2]).toContain('The typed fractions of stream 2 add up to 1: agrees, off by +0.040 wt %')
     expect(lines[3]).toContain('Rule Q1 also follows from the rest: agrees, off by +1.00')
     await userEvent.click(screen.getByRole('button', { name: 'Total flow of 3' }))
