@@ -28,7 +28,6 @@ const STARTS = 12
 const MOST_POINTS = 4
 /** Starts that come upon the same one point before the rest are spared. */
 const SAME_POINT = 6
-const MET = 1e-9
 
 /** Searches solutions of a block's equations among the solutions of the linear rows, from seeded starts. */
 export function blockPoints(model: Model, space: FreeSpace, block: Block, work: Work): BlockPoints | undefined {
@@ -49,9 +48,9 @@ export function blockPoints(model: Model, space: FreeSpace, block: Block, work: 
       from,
       0,
     )
-    const found = inside && leastSquares(search.equations(true), inside.t, MET)
-    if (found && found.worst <= MET) {
-      const point = search.pointAt(found.t, true)
+    const found = inside && search.meet(inside.t, true)
+    if (found) {
+      const point = search.pointAt(found, true)
       if (!point) continue
       hits++
       if (!points.some((other) => search.isSame(other, point))) points.push(point)
@@ -59,8 +58,8 @@ export function blockPoints(model: Model, space: FreeSpace, block: Block, work: 
       continue
     }
     if (anywhere || points.length > 0) continue
-    const signless = leastSquares(search.equations(false), inside?.t ?? from, MET)
-    if (signless && signless.worst <= MET) anywhere = search.pointAt(signless.t, false)
+    const signless = search.meet(inside?.t ?? from, false)
+    if (signless) anywhere = search.pointAt(signless, false)
   }
   const isDetermined = points.length > 0 && points.every(isFull)
   // What one start alone came upon is too little to rest a value on.

@@ -9,6 +9,9 @@ import { along, tangentRows } from './tangent-rows'
 
 const POLISHED = 1e-15
 const MET = 1e-12
+/** Rough search: terms are measured anew this many times, since their own change would mislead the steps. */
+const ROUNDS = 6
+const ROUGHLY_MET = 1e-9
 /** Flows may be negative by this part of their size. */
 const NEGATIVE = 1e-8
 /** Points that differ by less than this part of a flow's size are one. */
@@ -87,19 +90,24 @@ export class BlockSearch {
     }
   }
 
-  /** What is left of each equation as a part of its terms and, if asked for, of flows below 0. */
-  equations(withSigns: boolean): Residuals {
+  /** What is left of each equation as a part of what its terms are at `from` and, if asked for, of flows below 0. */
+  private equations(withSigns: boolean, from: Float64Array): Residuals {
     const floor = this.own.map(() => 0)
+    const start = this.calculus(this.at(from))
+    const sizes = this.block.equations.map(({ equation }) => evaluateExpression(equation, start).terms)
     return (t) => {
       const x = this.at(t)
       const calculus = this.calculus(x)
       const all = withSigns ? this.below(x, floor) : { rest: [], gradient: [] }
-      for (const { equation } of this.block.equations) {
-        const { value, terms, gradient } = evaluateExpression(equation, calculus)
-        const size = terms || 1
+      for (const [i, { equation }] of this.block.equations.entries()) {
+        const { value, gradient } = evaluateExpression(equation, calculus)
+        const size = sizes[i] || 1
         const scaled = new Float64Array(gradient.length)
         let sum = value
-        for (let k = 0; k < scaled.length; k++) sum += scaled[k] = (gradient[k] as number) / size
+        for (let k = 0; k < scaled.length; k++) {
+          scaled[k] = (gradient[k] as number) / size
+          sum += scaled[k] as number
+        }
         if (!Number.isFinite(sum)) return undefined
         all.rest.push(value / size)
         all.gradient.push(scaled)
@@ -108,9 +116,26 @@ export class BlockSearch {
     }
   }
 
+  /** A place where all equations are roughly met; undefined where the way there ends before. */
+  meet(start: Float64Array, withSigns: boolean): Float64Array | undefined {
+    let t = start
+    let before = Number.POSITIVE_INFINITY
+    for (let round = 0; round < ROUNDS; round++) {
+      const found = leastSquares(this.equations(withSigns, t), t, ROUGHLY_MET)
+      if (!found) return undefined
+      t = found.t
+      if (found.worst <= ROUGHLY_MET) return t
+      const again = this.equations(withSigns, t)(t)
+      const worst = again ? Math.max(...again.rest.map(Math.abs)) : Number.POSITIVE_INFINITY
+      if (worst > 0.9 * before) return undefined
+      before = worst
+    }
+    return undefined
+  }
+
   /** The point sharpened, with independent tangent rows; undefined where it is a false one or its rank is unsure. */
   pointAt(rough: Float64Array, withSigns: boolean): BlockPoint | undefined {
-    const fine = leastSquares(this.equations(false), rough, POLISHED)
+    const fine = leastSquares(this.equations(false, rough), rough, POLISHED)
     if (!fine || fine.worst > MET) return undefined
     const x = this.at(fine.t)
     if (withSigns && this.own.some((j) => (x[j] as number) < -NEGATIVE * (this.space.size[j] as number)))

@@ -46,10 +46,10 @@ export function findBranches(model: Model, start: Branch, work: Work): Branches 
     for (const group of open) {
       const isolated = isolate(model, space, group, work)
       if (isolated === 'open' || isolated === 'unsure') continue
-      const next = isolated.roots.map((root) => follow(model, branch, root, work))
+      const items = group.rules.map(({ item }) => item)
+      const next = isolated.roots.map((root) => follow(model, branch, items, root, work))
       if (next.includes('unsure')) continue
       const possible = next.filter((its): its is Branch => its !== 'impossible' && its !== 'unsure')
-      const items = group.rules.map(({ item }) => item)
       if (possible.length > room) continue
       const leaves = possible.flatMap((its, k) => explore(its, Math.floor((room - k) / (possible.length - k))))
       if (leaves.length === 0) for (const item of items) none.add(item)
@@ -78,17 +78,23 @@ function groupByScalar(rules: readonly ScalarRule[]): OneScalar[] {
   return [...groups.values()]
 }
 
-/** Goes on with one root; 'unsure' where it cannot be told whether it is possible. */
+/** Goes on with one root, at which the rows say all that `items` do; 'unsure' where it cannot be told whether it is possible. */
 function follow(
   model: Model,
   { assembly, resolved, touches }: Branch,
+  items: readonly Pending[],
   root: { touches: boolean; rows: { source: number; form: LinearForm }[] },
   work: Work,
 ): Branch | 'impossible' | 'unsure' {
   if (!work.take(20 * resolved.knowledge.elimination.rows.column.length)) return 'unsure'
-  const next: Assembly = { ...assembly, rows: copyOf(assembly.rows), pending: resolved.left }
+  const next: Assembly = {
+    ...assembly,
+    rows: copyOf(assembly.rows),
+    pending: resolved.left.filter((item) => !items.includes(item)),
+  }
   for (const { source, form } of root.rows) next.rows.push(source, form.columns, form.coefficients, 0 - form.constant)
   const found = resolve(model, next)
+  if (!found.knowledge.generic.value.every(Number.isFinite)) return 'unsure'
   const opening = worstOpening(found.knowledge)
   if (opening > CLASHES) return 'impossible'
   if (opening > 0) return 'unsure'

@@ -39,9 +39,6 @@ export type LocalSpace = {
   row: (form: LinearForm) => { entries: Float64Array; terms: number }
 }
 
-/** Entries below this part of their terms are rounding. */
-const NOTHING = 1e-12
-
 /** undefined where it cannot be told which directions are independent. */
 export function localSpace(space: FreeSpace, columns: readonly number[]): LocalSpace | undefined {
   const { point, directions, size } = space
@@ -74,10 +71,7 @@ export function localSpace(space: FreeSpace, columns: readonly number[]): LocalS
         }
       })
       let terms = 0
-      for (let k = 0; k <= rank; k++) {
-        if (Math.abs(entries[k] as number) <= NOTHING * (made[k] as number)) entries[k] = 0
-        terms = Math.max(terms, made[k] as number)
-      }
+      for (let k = 0; k <= rank; k++) terms = Math.max(terms, made[k] as number)
       return { entries, terms }
     },
   }

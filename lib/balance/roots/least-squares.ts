@@ -1,7 +1,7 @@
 /** Residuals and their gradients (one row each) at a place; undefined where it makes no sense there. */
 export type Residuals = (t: Float64Array) => { rest: number[]; gradient: Float64Array[] } | undefined
 
-const STEPS = 80
+const STEPS = 40
 const FIRST_DAMPING = 1e-2
 const LEAST_DAMPING = 1e-13
 const MOST_DAMPING = 1e8

@@ -160,13 +160,13 @@ function isForcedToZero(
   space: FreeSpace,
 ): boolean {
   const { entries, terms } = local.row({ columns: [column], coefficients: [1], constant: 0 })
-  if (entries.slice(0, -1).every((value) => value === 0)) return false
+  const size = Math.max(terms, space.size[column] as number)
+  if (entries.slice(0, -1).every((value) => Math.abs(value) <= ROUNDING * size)) return false
   const left = Float64Array.from(entries)
   reduced.rows.forEach((row, q) => {
     const factor = left[reduced.pivotColumns[q] as number] as number
     for (let k = 0; k < left.length; k++) left[k]! -= factor * (row[k] as number)
   })
-  const size = Math.max(terms, space.size[column] as number)
   return left.every((value) => Math.abs(value) <= SURE * size)
 }
 

@@ -32,8 +32,9 @@ export function tangentRows(
   const { pivotRows, sure } = reduce(matrix, directions.length)
   if (!sure) return undefined
   return pivotRows.map((i) => {
-    const { source, gradient } = all[i] as (typeof all)[number]
-    const { columns, coefficients } = gradient
+    const { source, gradient, terms } = all[i] as (typeof all)[number]
+    const { columns } = gradient
+    const coefficients = gradient.coefficients.map((value) => value / terms)
     const constant = -columns.reduce((sum, j, k) => sum + (coefficients[k] as number) * (x[j] as number), 0)
     return { source, form: { columns, coefficients, constant } }
   })

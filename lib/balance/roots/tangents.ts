@@ -75,7 +75,11 @@ export function linearisedAt(model: Model, branch: Branch, x: Float64Array, work
     if (!its) return undefined
     rows.push(...its)
   }
-  return withRows(model, branch, rows, work)
+  const near = withRows(model, branch, rows, work)
+  if (!near) return undefined
+  // What is typed as a ratio is weighed by the flows of this solution.
+  const generic = { value: x, size: x.map(Math.abs) }
+  return { ...near, resolved: { ...near.resolved, knowledge: { ...near.resolved.knowledge, generic } } }
 }
 
 function withRows(model: Model, branch: Branch, rows: readonly TangentRow[], work: Work): Branch | undefined {
