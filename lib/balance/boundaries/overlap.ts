@@ -23,7 +23,7 @@ const namesOf = (overlaps: readonly Overlap[]): string[] => [
 ]
 
 /** What a person calls an equation. */
-export function equationName({ equation, component, element, stream, quantity, id }: Use): string {
+export function equationName({ equation, component, element, stream, quantity, parts, id }: Use): string {
   switch (equation) {
     case 'balance':
       return `the ${component ?? element} balance${id === undefined ? '' : ` of ${id}`}`
@@ -31,8 +31,10 @@ export function equationName({ equation, component, element, stream, quantity, i
       return `the total balance${id === undefined ? '' : ` of ${id}`}`
     case 'sum':
       return `the sum of stream ${stream}`
-    case 'given':
-      return `the typed ${quantity} of stream ${stream}${component === undefined ? '' : ` (${component})`}`
+    case 'given': {
+      const of = component ?? element ?? parts?.join(' + ')
+      return `the typed ${quantity} of stream ${stream}${of === undefined ? '' : ` (${of})`}`
+    }
     case 'rule':
       return `rule ${id}${component === undefined ? '' : ` for ${component}`}`
     case 'composition':

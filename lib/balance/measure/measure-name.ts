@@ -23,5 +23,5 @@ export const placeOf = (given: Given): Place => ({
 const sorted = (list: readonly string[] | undefined): string[] | null => (list ? [...list].sort() : null)
 
 /** Equal for two names of one measure: the order within a list does not matter. */
-export const measureKey = ({ quantity, component, without, element, parts, over }: MeasureName): string =>
-  JSON.stringify([quantity, component ?? null, sorted(without), element ?? null, sorted(parts), sorted(over)])
+export const measureKey = ({ quantity, component, without, element, parts, over }: Partial<MeasureName>): string =>
+  JSON.stringify([quantity ?? null, component ?? null, sorted(without), element ?? null, sorted(parts), sorted(over)])

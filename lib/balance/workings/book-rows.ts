@@ -1,5 +1,6 @@
 import type { Settled } from '../conflicts/find-conflicts'
 import type { LinearForm } from '../measure/measure'
+import { nameOf } from '../measure/measure-name'
 import { ColumnKind, type Model } from '../model'
 import { compositionOf } from '../pending/composition'
 import { isBalanced } from '../rows/balances'
@@ -90,8 +91,7 @@ export function sortRows(model: Model, { assembly, resolved }: Settled): BookRow
       case 'given': {
         const given = model.problem.givens?.[source.index]
         if (!given || columns.length === 0) break
-        const { stream: id, quantity, component } = given
-        const use: Use = { equation: 'given', stream: id, quantity, ...(component !== undefined && { component }) }
+        const use: Use = { equation: 'given', stream: given.stream, ...nameOf(given) }
         book.givens[stream]?.push(row(use))
         break
       }

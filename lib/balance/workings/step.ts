@@ -1,16 +1,14 @@
-import type { Quantity } from '../problem'
+import { measureKey } from '../measure/measure-name'
+import type { MeasureName, Quantity } from '../problem'
 
 /**
  * One equation that a step uses. `balance` and `total` are those of the step's boundary; with an `id` they are those of
  * that one unit inside it. `given` is a typed value, `sum` a stream's total as the sum of its components, `rule` a rule
  * by its id, `composition` the equality that a splitter or a rule (by its id) asks of the streams named with it.
  */
-export type Use = {
+export type Use = Partial<MeasureName> & {
   equation: 'balance' | 'total' | 'sum' | 'given' | 'rule' | 'composition'
-  component?: string
-  element?: string
   stream?: string
-  quantity?: Quantity
   id?: string
 }
 
@@ -36,4 +34,4 @@ export type Step = {
 }
 
 export const sameUse = (use: Use): string =>
-  `${use.equation}|${use.component ?? ''}|${use.element ?? ''}|${use.stream ?? ''}|${use.quantity ?? ''}|${use.id ?? ''}`
+  JSON.stringify([use.equation, use.stream ?? null, use.id ?? null, measureKey(use)])
