@@ -232,6 +232,8 @@ const BEGINNINGS =
 function bareFormula(scan: Scan, column: number): Body & { percent: Percent } {
   const text = quoteIds(rawFormula(scan))
   if (!text.includes('=')) throw new Unread(column, BEGINNINGS)
+  if (/\d,\d/.test(text.replace(/"(?:[^"\\]|\\.)*"/g, '')))
+    throw new Unread(column, 'Write the decimal sign as a point.')
   const parsed = parseFormulaText(text)
   if (!parsed.ok) throw new Unread(column, `${BEGINNINGS} As a relation it cannot be read: ${parsed.what}.`)
   return { ruleKind: 'formula', text, formulaAt: column, percent: 'plain' }

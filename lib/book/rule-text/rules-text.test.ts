@@ -113,6 +113,7 @@ describe('rules as text', () => {
     ['split of T-101 to 105 = 0.35 ± 0', 32, /more than 0/],
     ['split of T-101 to 105 = 0.35 or so', 30, /not understood/],
     ['split of T-101 to 105 = k9', 25, /There is no parameter “k9”/],
+    ['flow(105) = 0,4 * flow(103)', 1, /decimal sign as a point/],
     ['flow(105) = 2 * flw(103)', 1, /no function/],
     ['flow(105) + flow(777) = 2', 1, /There is no stream “777”/],
     ['same composition in 101, 101', 26, /listed twice/],
