@@ -1,5 +1,5 @@
 /// <reference lib="webworker" />
-import { solve } from '@/lib/balance'
+import { createSolver } from '@/lib/balance'
 import { apply } from '@/lib/book/change'
 import { type BookState, emptyState, stateOf } from '@/lib/book/state'
 import { toProblem } from '@/lib/book/to-problem'
@@ -8,6 +8,8 @@ import type { FromSolver, ToSolver } from './solver-messages'
 declare const self: DedicatedWorkerGlobalScope
 
 let state: BookState = emptyState()
+/** Remembers the structure between edits. */
+const solver = createSolver()
 
 self.onmessage = (event: MessageEvent<ToSolver>) => {
   const message = event.data
@@ -23,7 +25,7 @@ self.onmessage = (event: MessageEvent<ToSolver>) => {
 function answer({ sequence, caseId }: ToSolver): [FromSolver, Transferable[]] {
   try {
     const { problem, streams, components, leftOut, wanted, rows } = toProblem(state, caseId)
-    const solution = solve(problem, wanted)
+    const solution = solver.solve(problem, wanted)
     const more = solution.wanted
     return [
       { type: 'solved', sequence, solution, streams, components, rows, leftOut },

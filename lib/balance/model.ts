@@ -1,6 +1,9 @@
 import { type Atoms, molarMassOf, parseFormula } from './chemistry/chemical-formula'
+import type { Measure } from './measure/measure'
 import { type BookUnits, bookUnits } from './measure/units-of-measure'
-import type { Problem, UnitKind } from './problem'
+import type { Problem, Quantity, UnitKind } from './problem'
+import type { RowStore } from './rows/row-store'
+import type { PivotMemory } from './sparse/pivot-memory'
 
 /** What a column of the rows stands for. Only component flows, totals and other totals can never be negative. */
 export const ColumnKind = { componentFlow: 0, total: 1, otherTotal: 2, extent: 3, parameter: 4 } as const
@@ -58,10 +61,42 @@ export type Model = {
   unitIndex: Map<string, number>
   reactionIndex: Map<string, number>
   parameterIndex: Map<string, number>
+  /** Measures by quantity and place, made when first asked for (measureOf). */
+  measures: Map<Quantity, Map<number, Measure>>
+  /** Definitions and balances, made when first asked for (assemble). */
+  structureRows?: RowStore
+  /** Orders of pivots of earlier eliminations, where a solver remembers them. */
+  pivots?: PivotMemory
 }
 
 const indexById = (list: readonly { id: string }[]): Map<string, number> =>
   new Map(list.map(({ id }, index) => [id, index]))
+
+/**
+ * All of a problem that a model is made from, as one text: two problems of the same text differ only in what is typed
+ * (givens, values of rules and of parameters), and one model serves both.
+ */
+export function structureOf(problem: Problem): string {
+  return JSON.stringify([
+    problem.basis,
+    problem.flowUnit,
+    problem.components.map(({ id, formula, molarMass }) => [id, formula, molarMass]),
+    problem.streams.map(({ id, components, density }) => [id, components, density]),
+    problem.units.map(({ id, kind, balance, inventory }) => [id, kind, balance, inventory]),
+    problem.links,
+    problem.reactions?.map(({ id, unit, stoichiometry }) => [id, unit, stoichiometry]),
+    problem.parameters?.map(({ id, value }) => [id, value === undefined]),
+    streamsOnOtherBasis(problem),
+  ])
+}
+
+/** Streams with a given that needs the total on the other basis. */
+function streamsOnOtherBasis({ basis, givens }: Problem): string[] {
+  const otherBasis = basis === 'mass' ? ['moleFlow', 'moleFraction'] : ['massFlow', 'massFraction']
+  const streams = new Set<string>()
+  for (const { stream, quantity } of givens ?? []) if (otherBasis.includes(quantity)) streams.add(stream)
+  return [...streams]
+}
 
 /** undefined only where the flow unit does not fit the basis, which a checked problem cannot have. */
 export function buildModel(problem: Problem): Model | undefined {
@@ -97,11 +132,9 @@ export function buildModel(problem: Problem): Model | undefined {
     return list.length === 1 ? (flowColumn[s * nComponents + (list[0] as number)] as number) : column(ColumnKind.total)
   })
   const otherTotalColumn = new Int32Array(nStreams).fill(-1)
-  const otherBasis = problem.basis === 'mass' ? ['moleFlow', 'moleFraction'] : ['massFlow', 'massFraction']
-  for (const { stream, quantity } of problem.givens ?? []) {
+  for (const stream of streamsOnOtherBasis(problem)) {
     const s = streamIndex.get(stream) as number
-    if (otherBasis.includes(quantity) && otherTotalColumn[s] === -1 && (present[s] as number[]).length > 1)
-      otherTotalColumn[s] = column(ColumnKind.otherTotal)
+    if ((present[s] as number[]).length > 1) otherTotalColumn[s] = column(ColumnKind.otherTotal)
   }
   const extentColumn = Int32Array.from(reactions, () => column(ColumnKind.extent))
   const parameterColumn = Int32Array.from(parameters, ({ value }) =>
@@ -157,6 +190,7 @@ export function buildModel(problem: Problem): Model | undefined {
     unitIndex,
     reactionIndex: indexById(reactions),
     parameterIndex: indexById(parameters),
+    measures: new Map(),
   }
 }
 

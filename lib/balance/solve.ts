@@ -2,7 +2,7 @@ import { blockedCells } from './conflicts/blocked'
 import { describeConflicts } from './conflicts/describe-conflicts'
 import { settle } from './conflicts/find-conflicts'
 import { structureDiagnostics } from './diagnostics'
-import { buildModel, ColumnKind, type Model } from './model'
+import { buildModel, ColumnKind, type Model, structureOf } from './model'
 import type { MeasureName, Problem } from './problem'
 import { findRoots } from './roots/find-roots'
 import { columnWithRoots, flagTouching, rootValues } from './roots/root-cells'
@@ -10,6 +10,7 @@ import { rootDiagnostics } from './roots/root-diagnostics'
 import { fixedRuleValue, ruleInUse } from './rows/assemble'
 import { keepSettled } from './settled-of'
 import type { Solution } from './solution'
+import { PivotMemory } from './sparse/pivot-memory'
 import { findAmplified } from './states/amplification'
 import { emptyCells, fillCells } from './states/fill-cells'
 import { fillWanted } from './states/fill-wanted'
@@ -17,14 +18,41 @@ import { freeScaleBlocks } from './states/free-scale'
 import { pendingDiagnostics, zeroInletDiagnostics } from './states/rule-diagnostics'
 import { countCells, extentResults, freedomWithin } from './states/summary'
 
+/** Solves problems, one after another, as `solve` does. */
+export type Solver = { solve(problem: Problem, wanted?: readonly MeasureName[]): Solution }
+
+/**
+ * A solver that keeps what depends only on structure (model, balance rows, order of pivots) for as long as only values
+ * change, as they do while someone types. Its answers are those of `solve`: whatever is kept is tested against the
+ * numbers before it is used.
+ */
+export function createSolver(): Solver {
+  const pivots = new PivotMemory()
+  let kept: { structure: string; model: Model } | undefined
+  return {
+    solve: (problem, wanted = []) =>
+      guarded(problem, wanted, () => {
+        const structure = structureOf(problem)
+        const model = kept?.structure === structure ? { ...kept.model, problem } : buildModel(problem)
+        if (!model) return undefined
+        model.pivots = pivots
+        kept = { structure, model }
+        return model
+      }),
+  }
+}
+
 /**
  * States and values of every cell of a checked problem. Never throws for what a person typed: a failure inside gives
  * the status `gaveUp` with a diagnostic that says so. Array sizes are those of `Solution`.
  * `wanted` names measures besides the cells that are to be answered for every stream.
  */
-export function solve(problem: Problem, wanted: readonly MeasureName[] = []): Solution {
+export const solve = (problem: Problem, wanted: readonly MeasureName[] = []): Solution =>
+  guarded(problem, wanted, () => buildModel(problem))
+
+function guarded(problem: Problem, wanted: readonly MeasureName[], modelOf: () => Model | undefined): Solution {
   try {
-    const model = buildModel(problem)
+    const model = modelOf()
     if (!model)
       return gaveUp(problem, `The flow unit ${problem.flowUnit} does not fit a book on a ${problem.basis} basis.`)
     return solveModel(model, wanted)

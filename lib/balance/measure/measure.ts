@@ -79,13 +79,28 @@ function volume(model: Model, stream: number): LinearForm {
   return combine(model.units.mass.factor / density, mass, 0, constantForm(0))
 }
 
-/** The measure that a plain quantity of a stream stands for; flows in the units of `model.units`, fractions of 1. */
-export function measureOf(
-  model: Model,
-  quantity: Exclude<Quantity, ExtraQuantity>,
-  stream: number,
-  component: number,
-): Measure {
+type PlainQuantity = Exclude<Quantity, ExtraQuantity>
+
+/**
+ * The measure that a plain quantity of a stream stands for; flows in the units of `model.units`, fractions of 1. Each is made
+ * once for a model, and never changed.
+ */
+export function measureOf(model: Model, quantity: PlainQuantity, stream: number, component: number): Measure {
+  const place = stream * (model.nComponents + 1) + component + 1
+  let its = model.measures.get(quantity)
+  if (!its) {
+    its = new Map()
+    model.measures.set(quantity, its)
+  }
+  let measure = its.get(place)
+  if (!measure) {
+    measure = makeMeasure(model, quantity, stream, component)
+    its.set(place, measure)
+  }
+  return measure
+}
+
+function makeMeasure(model: Model, quantity: PlainQuantity, stream: number, component: number): Measure {
   const own = model.problem.basis
   switch (quantity) {
     case 'flow':

@@ -33,12 +33,10 @@ export function fixedRuleValue(model: Model, value: Value): number | undefined {
 
 /** Builds every row of a checked problem. Cost is proportional to the entries. */
 export function assemble(model: Model, options: AssemblyOptions = {}): Assembly {
-  const rows = new RowStore()
+  const rows = structureRows(model).copy()
   const pending: Pending[] = []
   const { givens, clashes } = givensInUse(model, options)
   const clashing = new Set(clashes.flatMap(({ members }) => members))
-  pushDefinitions(model, rows)
-  pushBalances(model, rows)
   pushGivens(
     model,
     rows,
@@ -72,6 +70,16 @@ export function typedMembers(
     if (its && source?.type === 'rule') members.set(memberOfRule(model, source.index), its)
   })
   return members
+}
+
+/** Rows that hold whatever is typed: totals as sums and balances. Built once for a model. */
+function structureRows(model: Model): RowStore {
+  if (!model.structureRows) {
+    model.structureRows = new RowStore()
+    pushDefinitions(model, model.structureRows)
+    pushBalances(model, model.structureRows)
+  }
+  return model.structureRows
 }
 
 /** Streams of one composition: a component absent from one cannot be in the others; the rest waits until more is known. */

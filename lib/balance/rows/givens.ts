@@ -39,7 +39,7 @@ export function givensInUse(
     if ((given.use ?? 'given') !== 'given') return
     const stream = model.streamIndex.get(given.stream) as number
     const component = given.component === undefined ? -1 : (model.componentIndex.get(given.component) as number)
-    if (component >= 0 && !model.present[stream]?.includes(component)) return
+    if (component >= 0 && (model.flowColumn[stream * model.nComponents + component] as number) < 0) return
     const { value, halfWidth } = typedValue(model, given, largestFlow)
     const used = perturb && value !== 0 && value !== 1 ? perturb(value) : value
     const entry: GivenInUse = { index, given, stream, component, typed: value, base: used, value: used, halfWidth }
@@ -73,7 +73,7 @@ function putInWhole(model: Model, wholes: Map<string, Whole>, entry: GivenInUse)
   if (component < 0 || !quantity.endsWith('Fraction')) return
   const dry = quantity === 'dryMassFraction' || quantity === 'dryMoleFraction'
   const components = dry ? dryPart(model, stream, given) : (model.present[stream] as number[])
-  if (!components.includes(component)) return
+  if (dry && !components.includes(component)) return
   const key = `${stream}/${quantity}/${dry ? components.join() : ''}`
   const whole = wholes.get(key)
   if (whole) whole.entries.push(entry)
@@ -87,6 +87,7 @@ function settleFractions(
   dropped: Set<GivenInUse>,
   scaleAlways: boolean,
 ): FractionClash | undefined {
+  if (entries.length < list.length) return undefined
   const main = list.map(
     (c) =>
       entries.find(({ component, given }) => component === c && isMain(given)) ??

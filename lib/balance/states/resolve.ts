@@ -38,7 +38,7 @@ export function resolve(model: Model, assembly: Assembly, evenOpen = false): Res
   let left = assembly.pending
   const zero = rows.from({ type: 'zero' })
   for (let round = 0; ; round++) {
-    const knowledge = gatherKnowledge(eliminate(compileRows(rows, model.nColumns), nonNegative))
+    const knowledge = gatherKnowledge(eliminate(compileRows(rows, model.nColumns), nonNegative, model.pivots))
     const firstRow = rows.count
     let changes: Float64Array[] | undefined
     const push = (source: number, { form, restsOn: forms }: TurnedRow): void => {
