@@ -46,11 +46,10 @@ function agree(kept: Solution, fresh: Solution): void {
   expect(kept.status).toBe(fresh.status)
   expect(kept.summary).toEqual(fresh.summary)
   expect([...kept.states]).toEqual([...fresh.states])
-  const largest = fresh.values.reduce((most, value) => (Math.abs(value) > most ? Math.abs(value) : most), 0)
+  const largest = Math.max(1, ...[...fresh.values].filter(Number.isFinite).map(Math.abs))
   fresh.values.forEach((value, slot) => {
     if (Number.isNaN(value)) return
-    const close =
-      Math.abs((kept.values[slot] as number) - value) <= 1e-10 * Math.abs(value) + 1e-12 * Math.max(largest, 1)
+    const close = Math.abs((kept.values[slot] as number) - value) <= 1e-10 * Math.abs(value) + 1e-12 * largest
     expect(close, `slot ${slot}: ${kept.values[slot]} remembered, ${value} fresh`).toBe(true)
   })
 }
