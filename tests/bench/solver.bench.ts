@@ -1,15 +1,17 @@
-import { lusolve, type Matrix, lup as mathjsLup, matrix, sparse } from 'mathjs'
-import { type Problem, solve } from '@/lib/balance'
+import { writeFileSync } from 'node:fs'
+import { createSolver, type Problem, solve } from '@/lib/balance'
 import { buildModel, type Model } from '@/lib/balance/model'
 import { assemble } from '@/lib/balance/rows/assemble'
-import { compileRows } from '@/lib/balance/sparse/compiled-rows'
-import { type Elimination, eliminate } from '@/lib/balance/sparse/elimination'
 import { resolve } from '@/lib/balance/states/resolve'
 import { largeBook } from './large-book'
+import { mathjsTime, mlMatrixTime, octaveTime, superLuTime } from './others'
+import { type Line, report } from './report'
+import { squareRows } from './square-rows'
+import { workerEdit } from './worker-edit'
 
 /**
  * `npm run bench`: states and values of fully determined books of four sizes, assembly timed apart, beside one
- * factorisation and solve of the same independent square rows by mathjs sparse LU for the two small sizes.
+ * factorisation and solve of the same independent square rows by others. Prints a table and writes tests/bench/results.md.
  */
 const sizes = [
   [60, 20],
@@ -17,7 +19,9 @@ const sizes = [
   [600, 40],
   [1000, 50],
 ] as const
+/** Beyond these a run takes minutes. */
 const MATHJS_UP_TO = 300
+const ML_MATRIX_UP_TO = 60
 
 /** After as many runs to warm up, as a worker is warm while someone types. */
 const median = (run: () => void, times: number): number => {
@@ -30,55 +34,48 @@ const median = (run: () => void, times: number): number => {
   return taken.sort((a, b) => a - b)[Math.floor(times / 2)] as number
 }
 
-/** Milliseconds of mathjs for the pivot rows as one square system. */
-function mathjsTime(model: Model, e: Elimination): number {
-  const rows = [
-    ...e.peeled.rows.filter((i) => i >= 0),
-    ...Array.from(e.core.pivotRow, (r) => e.coreRow[r] as number),
-    ...e.singleRow,
-  ]
-  const n = model.nColumns
-  if (rows.length !== n) throw new Error(`the book is not fully determined: ${rows.length} rows for ${n} unknowns`)
-  const a = sparse() as Matrix
-  a.resize([n, n])
-  rows.forEach((i, r) => {
-    for (let k = e.rows.start[i] as number; k < (e.rows.start[i + 1] as number); k++)
-      a.set([r, e.rows.column[k] as number], e.rows.value[k] as number)
-  })
-  const b = matrix(rows.map((i) => [e.rows.rhs[i] as number]))
-  const start = performance.now()
-  lusolve(mathjsLup(a), b)
-  return performance.now() - start
+/** The problem with one flow moved at every second call: an edit of a value. */
+function edits(problem: Problem): () => Problem {
+  const [first, ...rest] = problem.givens ?? []
+  if (!first) throw new Error('the book has nothing to edit')
+  const moved = { ...problem, givens: [{ ...first, value: 1.01 * first.value }, ...rest] }
+  let flip = false
+  return () => {
+    flip = !flip
+    return flip ? moved : problem
+  }
 }
 
-const points: { entries: number; ms: number }[] = []
-for (const [nStreams, nComponents] of sizes) {
-  const problem: Problem = largeBook(nStreams, nComponents)
-  const model = buildModel(problem) as Model
-  const times = nStreams > 500 ? 3 : nStreams > 100 ? 9 : 60
-  const assembly = median(() => assemble(model), times)
+function measure(nStreams: number, nComponents: number): Line {
+  const problem = largeBook(nStreams, nComponents)
+  const times = nStreams > 500 ? 5 : nStreams > 100 ? 11 : 61
+  const assembly = median(() => assemble(buildModel(problem) as Model), times)
   const whole = median(() => solve(problem), times)
-  const assembled = assemble(model)
-  const e = resolve(model, assembled).knowledge.elimination
-  const compiled = compileRows(assembled.rows, model.nColumns)
-  const elimination = median(() => eliminate(compiled, assembled.nonNegative), times)
-  const { summary } = solve(problem)
-  points.push({ entries: compiled.column.length, ms: whole })
-  const parts = [
-    `${nStreams} x ${nComponents}`,
-    `${compiled.nRows} rows, ${compiled.column.length} entries, core ${e.coreRow.length}, unknown cells ${summary.unknown}`,
-    `assembly ${assembly.toFixed(1)} ms`,
-    `elimination ${elimination.toFixed(1)} ms`,
-    `states and values ${whole.toFixed(1)} ms`,
-  ]
-  if (nStreams <= MATHJS_UP_TO) {
-    const theirs = mathjsTime(model, e)
-    parts.push(`mathjs LU ${theirs.toFixed(0)} ms, ${(theirs / whole).toFixed(1)} times ours`)
+  const solver = createSolver()
+  const next = edits(problem)
+  const edit = median(() => solver.solve(next()), times)
+  const inWorker = median(workerEdit(problem), times)
+  const model = buildModel(problem) as Model
+  const { rows, ...elimination } = resolve(model, assemble(model)).knowledge.elimination
+  const square = squareRows({ rows, ...elimination })
+  const { unknown } = solve(problem).summary
+  if (unknown > 0) throw new Error(`${unknown} cells of the ${nStreams} x ${nComponents} book came out unknown`)
+  return {
+    size: `${nStreams} x ${nComponents}`,
+    rows: rows.nRows,
+    entries: rows.column.length,
+    assembly,
+    rest: whole - assembly,
+    whole,
+    edit,
+    inWorker,
+    superLu: superLuTime(square, times),
+    octave: octaveTime(square, times),
+    mathjs: nStreams <= MATHJS_UP_TO ? mathjsTime(square) : undefined,
+    mlMatrix: nStreams <= ML_MATRIX_UP_TO ? mlMatrixTime(square) : undefined,
   }
-  process.stdout.write(`${parts.join(' | ')}\n`)
 }
-const [small, large] = [points[1], points[points.length - 1]] as { entries: number; ms: number }[]
-const growth = Math.log((large?.ms ?? 1) / (small?.ms ?? 1)) / Math.log((large?.entries ?? 1) / (small?.entries ?? 1))
-process.stdout.write(
-  `growth exponent from ${sizes[1].join(' x ')} to ${sizes[3].join(' x ')}: ${growth.toFixed(2)} per entry\n`,
-)
+
+const text = report(sizes.map(([nStreams, nComponents]) => measure(nStreams, nComponents)))
+process.stdout.write(text)
+writeFileSync(new URL('results.md', import.meta.url), text)
