@@ -72,7 +72,9 @@ export type Check = {
   code: 'sum' | 'redundant' | 'checkOnly'
   givens: Place[]
   relations: string[]
+  /** Typed less what the others imply, of the first given (else the first rule); of a sum, the sum less 1. */
   by: number
+  /** What the half-widths can make of `by`. */
   tolerance: number
   agrees: boolean
 }

@@ -1,3 +1,5 @@
+import { checkOnly, uncheckedDiagnostics } from './checks/check-only'
+import { redundantChecks } from './checks/redundant-checks'
 import { blockedCells } from './conflicts/blocked'
 import { describeConflicts } from './conflicts/describe-conflicts'
 import { settle } from './conflicts/find-conflicts'
@@ -96,11 +98,13 @@ function solveModel(model: Model, wanted: readonly MeasureName[]): Solution {
     ...(wanted.length > 0 && { wanted: fillWanted(model, settled, cells, wanted, roots) }),
     extents: extentResults(model, givenExtents(model), known),
     conflicts: describeConflicts(model, settled),
+    checks: [...redundantChecks(model, linear), ...checkOnly(model, knowledge)],
     ...(settled.truncated && { conflictsTruncated: true }),
     ...(several && { roots: several }),
     diagnostics: [
       ...structureDiagnostics(model),
       ...zeroInletDiagnostics(model, knowledge),
+      ...uncheckedDiagnostics(model, knowledge),
       ...pendingDiagnostics(model, assembly, roots?.left ?? []),
       ...(roots ? rootDiagnostics(model, assembly, roots, cells) : []),
     ],
@@ -131,6 +135,7 @@ function gaveUp(problem: Problem, text: string): Solution {
     blockedBy: [],
     extents: (problem.reactions ?? []).map(({ id }) => ({ reaction: id, state: 'unknown' })),
     conflicts: [],
+    checks: [],
     diagnostics: [{ code: 'gaveUp', severity: 'error', text }],
   }
 }

@@ -117,7 +117,7 @@ function overlaps(a: readonly Circuit[], b: readonly Circuit[]): boolean {
 const isSame = (a: LinearForm, b: LinearForm): boolean => a.columns.join() === b.columns.join()
 
 /** The circuit as it stands with what was typed, at the weights of where it stands now. */
-function withoutMoves(circuit: Circuit, typed: ReturnType<typeof typedMembers>): Circuit {
+export function withoutMoves(circuit: Circuit, typed: ReturnType<typeof typedMembers>): Circuit {
   let { gap } = circuit
   for (const [member, reach] of circuit.reach) {
     const its = typed.get(member)

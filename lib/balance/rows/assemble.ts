@@ -160,7 +160,7 @@ function memberInUse(model: Model, rows: RowStore, source: number): Member {
 }
 
 /** Without a half-width of its own a rule is held to a part of its value; a value of 0 to that part of 1. */
-const halfWidthOfRule = (rule: Rule, value: number): number =>
+export const halfWidthOfRule = (rule: Rule, value: number): number =>
   rule.halfWidth ?? DEFAULT_HALF_WIDTH * (value === 0 ? 1 : Math.abs(value))
 
 function parameterColumn(model: Model, value: Value): number {
