@@ -8,7 +8,7 @@ const parameters = { numRuns: 50, verbose: 1, seed: 20_261_201 }
 
 /** Every value rounded to some significant digits, with half a unit of the last one: the truth lies within all of them. */
 function rounded(problem: Problem, digits: number): Problem {
-  const round = <T extends { value?: unknown }>(item: T): T => {
+  const round = <T extends object>(item: T & { value?: unknown }): T => {
     if (typeof item.value !== 'number' || item.value === 0) return item
     const halfWidth = 0.5 * 10 ** (Math.floor(Math.log10(Math.abs(item.value))) - digits + 1)
     return { ...item, value: Number(item.value.toPrecision(digits)), halfWidth }
