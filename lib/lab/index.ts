@@ -1,0 +1,3 @@
+export * from './model'
+export { readLabFile } from './read-file'
+export { readLabText } from './read-text'
