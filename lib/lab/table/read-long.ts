@@ -69,7 +69,17 @@ export function readLong(frame: Frame, ledger: Ledger, titled: Titled, basis: st
     const draft = describe(frame, ledger, row, columns, sample, titled)
     const result = readResult(ledger, cell, context)
     if (result) draft.results.push(result)
-    else ledger.notUnderstood.push(frame.place(row, (find('result') as LongColumn).column))
+    else {
+      ledger.notUnderstood.push(frame.place(row, (find('result') as LongColumn).column))
+      for (const column of filled)
+        if (
+          column.role === 'analyte' ||
+          column.role === 'unit' ||
+          column.role === 'basis' ||
+          column.role === 'qualifier'
+        )
+          ledger.passedOver.push(frame.place(row, column.column))
+    }
     ledger.drafts.push(draft)
   }
   for (const [label, results] of totals) ledger.totals.push({ label, results })

@@ -19,7 +19,11 @@ export function readWide(frame: Frame, ledger: Ledger, turned: boolean, basis: s
   const sums = new Map<Column, LabResult[]>()
   const builds = idBuilds(frame, layout)
   for (let row = 1; row < frame.height; row++) {
-    if (layout.subHeads.has(row)) continue
+    if (layout.subHeads.has(row)) {
+      for (let column = 0; column < frame.width; column++)
+        if (!isBlank(frame.at(row, column))) ledger.passedOver.push(frame.place(row, column))
+      continue
+    }
     readRow({ frame, ledger, layout, row, basis, builds, sums })
   }
   for (const [column, results] of sums)
