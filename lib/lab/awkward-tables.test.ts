@@ -1,6 +1,9 @@
 import { describe, expect, it } from 'vitest'
-import { awkward } from './awkward-tables.fixture'
+import { awkwardCells } from './awkward-cells.fixture'
+import { awkwardBuilds } from './awkward-tables.fixture'
 import { readingOf, tableOf } from './reading.fixture'
+
+const awkward = { ...awkwardCells, ...awkwardBuilds }
 
 describe('awkward tables', () => {
   for (const [kind, cases] of Object.entries(awkward))
