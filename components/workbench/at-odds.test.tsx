@@ -44,8 +44,8 @@ describe('what is at odds', () => {
   it('is settled by withdrawing one from the card; undo brings it back', async () => {
     const { user, go, said, card, strip, state } = open()
     await go('Total flow, stream 112')
-    expect(plain(card().getByText(/typed 10/).textContent)).toBe(
-      'typed 10 900, the others imply 10 615.8 kg/h: off by +284.19. Withdrawing this settles 1 of 1 set.',
+    expect(plain(card().getByText(/Typed 10/).textContent)).toBe(
+      'Typed 10 900, the others imply 10 615.8 kg/h: off by +284.19. Withdrawing this settles 1 of 1 set.',
     )
     await user.click(card().getByRole('button', { name: 'Withdraw total flow of 112' }))
     expect(given(state())).toMatchObject({ use: 'withdrawn', value: 10900 })

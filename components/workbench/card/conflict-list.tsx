@@ -7,6 +7,7 @@ import { MemberWays } from '../odds/member-ways'
 import { type OddsMember, oddsOf } from '../odds/odds-sets'
 import { backToCell } from '../regions'
 import { type RowPlace, rowIdOf } from '../rows'
+import { sentence } from '../words'
 import { CardSection } from './card-parts'
 
 /** More at once cannot be read; settling one usually settles others. */
@@ -33,7 +34,7 @@ export function ConflictList({ view, desk, stream, row }: ConflictListProps) {
       {own.map((member) => (
         <div key={member.key} className="mb-2 grid gap-1.5 text-sm">
           <p>
-            {numbers(member)} {settling(member, odds.sets.length, odds.truncated)}
+            {sentence(numbers(member))} {settling(member, odds.sets.length, odds.truncated)}
           </p>
           <MemberWays view={view} desk={desk} member={member} onDone={done} />
         </div>
@@ -52,7 +53,8 @@ export function ConflictList({ view, desk, stream, row }: ConflictListProps) {
               .filter((member) => !isHere(member))
               .map((member) => (
                 <li key={member.key}>
-                  <MemberName desk={desk} member={member} />: {numbers(member)}
+                  <MemberName desk={desk} member={member} />
+                  <p>{numbers(member)}</p>
                 </li>
               ))}
           </ul>

@@ -4,6 +4,7 @@ import { useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { setUse, type Use } from '@/lib/book/edits/ways-out'
 import { newId } from '@/lib/book/ids'
+import { plainNumber } from '@/lib/sheet/format'
 import type { BookView } from '../book-view'
 import type { Desk } from '../desk'
 import { lowered } from '../words'
@@ -44,12 +45,12 @@ export function MemberWays({ view, desk, member, onDone }: MemberWaysProps) {
             aria-expanded={asking}
             onClick={() => setAsking(!asking)}
           >
-            Uncertainty…
+            {given.sigma === null ? 'Uncertainty…' : `± ${plainNumber(given.sigma, view.decimal)} …`}
           </Button>
         ) : null}
       </div>
       {given && asking ? <SigmaInput view={view} desk={desk} given={given} autoFocus /> : null}
-      {given && (asking || given.sigma !== null) ? (
+      {given && asking ? (
         <p className="text-xs text-ink-2">
           {given.sigma === null
             ? 'A value with an uncertainty is a reading. '

@@ -55,7 +55,8 @@ function Lead({ view, desk, odds, onDone }: LeadProps) {
           : sets.length === 1
             ? 'Withdrawing any one of its members settles it. '
             : `No single value stands out: withdrawing any one of ${best.length} settles ${most} of ${all}. `}
-        {first.length === 0 ? 'Which of them is wrong only the plant can tell.' : ''}
+        {first.length === 0 ? 'Which of them is wrong only the plant can tell. ' : ' '}
+        Values with an uncertainty are readings; they stay at odds until they are reconciled, which comes with Readings.
       </p>
       {view.mayEdit && first.length > 0 ? (
         <div className="flex flex-wrap gap-2">
