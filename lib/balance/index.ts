@@ -9,6 +9,8 @@ export { countBoundary, type ExplainOptions, type Explanation, explain } from '.
 export { type FormulaNode, leavesOf, type ParsedFormula, parseFormulaText } from './formula/parse-formula'
 export { measureKey, nameOf } from './measure/measure-name'
 export * from './measure/units-of-measure'
+export { type MeasureNextOptions, measureNext } from './next/measure-next'
+export type { Cannot, MeasureNext } from './next/places'
 export * from './problem'
 export { type ReconcileOptions, reconcile } from './reconcile/reconcile'
 export { estimateOf, type Reconciled } from './reconcile/reconciled'

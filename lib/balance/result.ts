@@ -1,5 +1,6 @@
 import type { Boundary } from './boundaries/boundary'
 import { type Explanation, plainBoundary } from './explain'
+import type { MeasureNext } from './next/places'
 import type { Problem, Quantity } from './problem'
 import {
   CellFlag,
@@ -30,7 +31,7 @@ export type ResultCell = {
   blockedBy?: number[]
 }
 
-/** The result `tallybrook-result/1`. What to measure next is empty until it is built; boundaries and workings where explained. */
+/** The result `tallybrook-result/1`. Boundaries and workings are there where explained, what to measure next where asked for. */
 export type Result = {
   format: 'tallybrook-result/1'
   name: string
@@ -42,7 +43,7 @@ export type Result = {
   conflicts: Conflict[]
   conflictsTruncated?: boolean
   checks: Check[]
-  measureNext: never[]
+  measureNext: MeasureNext[]
   roots?: Solution['roots']
   diagnostics: Diagnostic[]
   status: SolveStatus
@@ -56,7 +57,12 @@ const stateNames = {
 } as const
 
 /** The solution of a problem as plain JSON: cells of every stream that exist, then the rest; workings where explained. */
-export function toResult(problem: Problem, solution: Solution, explanation?: Explanation): Result {
+export function toResult(
+  problem: Problem,
+  solution: Solution,
+  explanation?: Explanation,
+  next: MeasureNext[] = [],
+): Result {
   const amplification = new Map(solution.amplification)
   const blockedBy = new Map(solution.blockedBy)
   const cells: ResultCell[] = []
@@ -104,7 +110,7 @@ export function toResult(problem: Problem, solution: Solution, explanation?: Exp
     conflicts: solution.conflicts,
     ...(solution.conflictsTruncated && { conflictsTruncated: true }),
     checks: solution.checks ?? [],
-    measureNext: [],
+    measureNext: next,
     ...(solution.roots && { roots: solution.roots }),
     diagnostics: solution.diagnostics,
     status: solution.status,

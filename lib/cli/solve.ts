@@ -1,4 +1,4 @@
-import { explain, solve, toResult } from '@/lib/balance'
+import { explain, measureNext, solve, toResult } from '@/lib/balance'
 import { answerFiles, refuse } from './problem-files'
 
 /** `npm run -s solve -- FILE…`: one JSON result a line for each good file, one line per fault of a bad one, exit 2 if any. */
@@ -13,5 +13,7 @@ const allBoundaries = options.includes('--all-boundaries')
 
 answerFiles(files, 'npm run -s solve -- FILE…', (problem) => {
   const solution = solve(problem)
-  return toResult(problem, solution, explain(problem, solution, { allBoundaries }))
+  const isOpen = solution.status === 'open' || solution.status === 'atOdds'
+  const next = isOpen ? measureNext(problem) : []
+  return toResult(problem, solution, explain(problem, solution, { allBoundaries }), next)
 })

@@ -7,11 +7,25 @@ import type { Assembly } from '../rows/assemble'
  * Streams of each connected block in which no row holds a flow at a value other than 0, so that all its flows are known
  * up to a common factor at best. Blocks are joined by rows and by rules still to turn into rows.
  */
-export function freeScaleBlocks(
-  model: Model,
-  { rows, pending }: Assembly,
-  isZero: (stream: number) => boolean,
-): string[][] {
+export function freeScaleBlocks(model: Model, assembly: Assembly, isZero: (stream: number) => boolean): string[][] {
+  const { rows } = assembly
+  const find = blocksOf(model, assembly)
+  const scaled = new Set<number>()
+  for (let i = 0; i < rows.count; i++)
+    if (rows.rhs[i] !== 0 && (rows.start[i] as number) < (rows.start[i + 1] as number))
+      scaled.add(find(rows.column[rows.start[i] as number] as number))
+  const blocks = new Map<number, string[]>()
+  model.problem.streams.forEach(({ id }, s) => {
+    const column = model.totalColumn[s] as number
+    if (column < 0 || isZero(s)) return
+    const block = find(column)
+    if (!scaled.has(block)) blocks.set(block, [...(blocks.get(block) ?? []), id])
+  })
+  return [...blocks.values()]
+}
+
+/** The block of each column, named by one of its columns: what is joined by rows and by rules still to turn into rows. */
+export function blocksOf(model: Model, { rows, pending }: Assembly): (column: number) => number {
   const parent = Int32Array.from({ length: model.nColumns }, (_, j) => j)
   const find = (j: number): number => {
     let root = j
@@ -28,18 +42,7 @@ export function freeScaleBlocks(
   }
   for (let i = 0; i < rows.count; i++) join(rows.column.slice(rows.start[i], rows.start[i + 1]))
   for (const item of pending) join(columnsOf(model, item))
-  const scaled = new Set<number>()
-  for (let i = 0; i < rows.count; i++)
-    if (rows.rhs[i] !== 0 && (rows.start[i] as number) < (rows.start[i + 1] as number))
-      scaled.add(find(rows.column[rows.start[i] as number] as number))
-  const blocks = new Map<number, string[]>()
-  model.problem.streams.forEach(({ id }, s) => {
-    const column = model.totalColumn[s] as number
-    if (column < 0 || isZero(s)) return
-    const block = find(column)
-    if (!scaled.has(block)) blocks.set(block, [...(blocks.get(block) ?? []), id])
-  })
-  return [...blocks.values()]
+  return find
 }
 
 function columnsOf(model: Model, item: Pending): number[] {

@@ -1,0 +1,87 @@
+import { type Settled, settle } from '../conflicts/find-conflicts'
+import { buildModel, type Model } from '../model'
+import type { Problem } from '../problem'
+import { findRoots } from '../roots/find-roots'
+import { linearisedAt } from '../roots/tangents'
+import type { Work } from '../roots/work'
+import { assemble } from '../rows/assemble'
+import { memberOfRule } from '../rows/members'
+import { CellState } from '../solution'
+import type { Vector } from '../sparse/solve'
+import { findAmplified } from '../states/amplification'
+import { forEachCell } from '../states/cells'
+import { fillCells } from '../states/fill-cells'
+import { blocksOf } from '../states/free-scale'
+import type { Knowledge } from '../states/knowledge'
+import { countCells } from '../states/summary'
+import { randomPoint } from './random-point'
+import type { OpenCell } from './signatures'
+
+/** A book as far as it is solved, with the cells that are still unknown and may be asked about. */
+export type Terrain = {
+  model: Model
+  /** What the linear rows say, without roots. */
+  settled: Settled
+  /** Unknown cells of the book's own basis outside blocks at odds. */
+  open: OpenCell[]
+  /** All unknown cells of the summary. */
+  unknown: number
+}
+
+/** Undefined where the book cannot be worked at all. */
+export function surveyOpen(problem: Problem): Terrain | undefined {
+  const model = buildModel(problem)
+  if (!model) return undefined
+  const settled = settle(model)
+  const roots = findRoots(model, settled)
+  const { assembly, resolved, atOdds } = roots?.sure ?? settled
+  const cells = fillCells(model, resolved.knowledge, assembly.givens, atOdds, roots)
+  findAmplified(model, roots?.near ?? settled, cells)
+  const isAtOdds = streamsAtOdds(model, settled)
+  const open: OpenCell[] = []
+  forEachCell(model, ({ slot, stream, component, quantity, measure }) => {
+    if (quantity !== 'flow' && quantity !== 'componentFlow' && quantity !== 'fraction') return
+    if (cells.states[slot] !== CellState.unknown || isAtOdds(stream)) return
+    open.push({ slot, stream, component, quantity, measure })
+  })
+  return { model, settled, open, unknown: countCells(model, cells).unknown }
+}
+
+/** A stand-in for the plant: a solution, and what moves which way near it. */
+export type StandIn = { point: Vector; knowledge: Knowledge; isSolution: boolean }
+
+/**
+ * A random solution with the rows that hold at it and, to first order, near it. Where none without negative flows is
+ * found, the generic solution of the linear rows, with these.
+ */
+export function standIn({ model, settled }: Terrain, seed: number, work: Work): StandIn {
+  const { resolved, assembly } = settled
+  const point = randomPoint(model, settled, seed, work)
+  const near =
+    resolved.left.length > 0 && point
+      ? linearisedAt(model, { assembly, resolved, touches: false }, point.value, work)
+      : undefined
+  const { knowledge } = near?.resolved ?? resolved
+  return { point: point ?? knowledge.generic, knowledge, isSolution: point !== undefined }
+}
+
+/** Streams joined by rows to anything that is at odds: from such a block nothing is claimed. */
+function streamsAtOdds(model: Model, { atOdds }: Settled): (stream: number) => boolean {
+  if (atOdds.size === 0) return () => false
+  const assembly = assemble(model)
+  const find = blocksOf(model, assembly)
+  const blocks = new Set<number>()
+  for (const { index, stream } of assembly.givens)
+    if (atOdds.has(index)) blocks.add(find(model.totalColumn[stream] as number))
+  const { rows } = assembly
+  rows.source.forEach((number, i) => {
+    const source = rows.sources[number]
+    if (source?.type !== 'rule' || !atOdds.has(memberOfRule(model, source.index))) return
+    for (let k = rows.start[i] as number; k < (rows.start[i + 1] as number); k++)
+      blocks.add(find(rows.column[k] as number))
+  })
+  return (stream) => {
+    const column = model.totalColumn[stream] as number
+    return column >= 0 && blocks.has(find(column))
+  }
+}
