@@ -1,9 +1,10 @@
 import { settle } from '../conflicts/find-conflicts'
 import { buildModel } from '../model'
 import type { Problem } from '../problem'
+import type { KeptCell } from '../states/cells'
 import { knownMeasure } from '../states/knowledge'
 import { givenAt, type MeasureNext, measurableFirst, placeOf, withGivens } from './places'
-import { classesOf, freshProbes, type OpenCell, type Signature, signaturesOf, withMeasured } from './signatures'
+import { classesOf, freshProbes, type Signature, signaturesOf, withMeasured } from './signatures'
 import { type StandIn, surveyOpen, type Terrain } from './terrain'
 
 type Allowed = (signature: Signature) => boolean
@@ -115,7 +116,7 @@ function bestOf(classes: Signature[][], allowed: Allowed): Signature | undefined
  * The open cells that are left once these are typed, as the rows and what turns linear give them: what is found in one of
  * several ways of meeting a rule hangs on the value and is not counted. undefined where typing them brings a clash.
  */
-export function leftOpen(problem: Problem, terrain: Terrain, picks: readonly Signature[]): OpenCell[] | undefined {
+export function leftOpen(problem: Problem, terrain: Terrain, picks: readonly Signature[]): KeptCell[] | undefined {
   const model = buildModel(
     withGivens(
       problem,

@@ -1,8 +1,8 @@
 import type { Model } from '../model'
 import type { Given, Problem } from '../problem'
 import type { Place } from '../solution'
-import { quantityOfCell } from '../states/cells'
-import type { OpenCell, Signature } from './signatures'
+import { type KeptCell, quantityOfCell } from '../states/cells'
+import type { Signature } from './signatures'
 
 export type Cannot = {
   places?: readonly Place[]
@@ -20,7 +20,7 @@ export function measurableFirst(its: readonly Signature[]): Signature[] {
   return [...its].sort((a, b) => (rank[a.cell.quantity] as number) - (rank[b.cell.quantity] as number))
 }
 
-export function placeOf(model: Model, { stream, component, quantity }: OpenCell): Place {
+export function placeOf(model: Model, { stream, component, quantity }: KeptCell): Place {
   const { streams, components } = model.problem
   return {
     stream: streams[stream]?.id as string,

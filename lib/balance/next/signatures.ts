@@ -1,12 +1,9 @@
 import { MOVES, type Vector } from '../sparse/solve'
-import type { Cell } from '../states/cells'
+import type { KeptCell } from '../states/cells'
 import { addProbe, evaluate, type Knowledge } from '../states/knowledge'
 
-/** A cell, kept from a walk over them. */
-export type OpenCell = Pick<Cell, 'slot' | 'stream' | 'component' | 'quantity' | 'measure'>
-
 /** How an unknown cell moves along each probe, at one solution; `error` bounds what in it is rounding. */
-export type Signature = { cell: OpenCell; value: number; moves: Float64Array; error: Float64Array }
+export type Signature = { cell: KeptCell; value: number; moves: Float64Array; error: Float64Array }
 
 const ZERO_DENOMINATOR = 1e-9
 const ROUNDING = 2e-16
@@ -21,7 +18,7 @@ export function freshProbes(knowledge: Knowledge, count: number): Vector[] {
 }
 
 /** Cells that move, with their values at the solution. A ratio to a flow of 0 has none and is left out. */
-export function signaturesOf(cells: readonly OpenCell[], point: Vector, probes: readonly Vector[]): Signature[] {
+export function signaturesOf(cells: readonly KeptCell[], point: Vector, probes: readonly Vector[]): Signature[] {
   const found: Signature[] = []
   for (const cell of cells) {
     const { numerator, denominator } = cell.measure

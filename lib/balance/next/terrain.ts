@@ -9,13 +9,12 @@ import { memberOfRule } from '../rows/members'
 import { CellState } from '../solution'
 import type { Vector } from '../sparse/solve'
 import { findAmplified } from '../states/amplification'
-import { forEachCell } from '../states/cells'
+import { forEachCell, type KeptCell, keepCell } from '../states/cells'
 import { fillCells } from '../states/fill-cells'
 import { blocksOf } from '../states/free-scale'
 import type { Knowledge } from '../states/knowledge'
 import { countCells } from '../states/summary'
 import { randomPoint } from './random-point'
-import type { OpenCell } from './signatures'
 
 /** A book as far as it is solved, with the cells that are still unknown and may be asked about. */
 export type Terrain = {
@@ -23,7 +22,7 @@ export type Terrain = {
   /** What the linear rows say, without roots. */
   settled: Settled
   /** Unknown cells of the book's own basis outside blocks at odds. */
-  open: OpenCell[]
+  open: KeptCell[]
   /** All unknown cells of the summary. */
   unknown: number
 }
@@ -38,11 +37,10 @@ export function surveyOpen(problem: Problem): Terrain | undefined {
   const cells = fillCells(model, resolved.knowledge, assembly.givens, atOdds, roots)
   findAmplified(model, roots?.near ?? settled, cells)
   const isAtOdds = streamsAtOdds(model, settled)
-  const open: OpenCell[] = []
-  forEachCell(model, ({ slot, stream, component, quantity, measure }) => {
-    if (quantity !== 'flow' && quantity !== 'componentFlow' && quantity !== 'fraction') return
-    if (cells.states[slot] !== CellState.unknown || isAtOdds(stream)) return
-    open.push({ slot, stream, component, quantity, measure })
+  const open: KeptCell[] = []
+  forEachCell(model, (cell) => {
+    const own = cell.quantity === 'flow' || cell.quantity === 'componentFlow' || cell.quantity === 'fraction'
+    if (own && cells.states[cell.slot] === CellState.unknown && !isAtOdds(cell.stream)) open.push(keepCell(cell))
   })
   return { model, settled, open, unknown: countCells(model, cells).unknown }
 }

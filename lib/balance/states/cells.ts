@@ -40,6 +40,17 @@ export class Cell {
   }
 }
 
+/** A cell taken out of a walk, to be kept. */
+export type KeptCell = Pick<Cell, 'slot' | 'stream' | 'component' | 'quantity' | 'measure'>
+
+export const keepCell = ({ slot, stream, component, quantity, measure }: Cell): KeptCell => ({
+  slot,
+  stream,
+  component,
+  quantity,
+  measure,
+})
+
 /**
  * Every cell that exists, stream by stream, the flow before the fractions that rest on it. The other basis' cells exist
  * where all molar masses are known.

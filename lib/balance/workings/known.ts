@@ -2,12 +2,12 @@ import type { Settled } from '../conflicts/find-conflicts'
 import { combine, type LinearForm } from '../measure/measure'
 import { ColumnKind, type Model } from '../model'
 import { CellState, type Solution } from '../solution'
-import { type Cell, forEachCell } from '../states/cells'
+import { forEachCell, type KeptCell, keepCell } from '../states/cells'
 import type { BookRows, Row } from './book-rows'
 import type { Use } from './step'
 
 /** A cell that the exact answer knows and that no step has found yet, with the form that is 0 (or fixed) when it is. */
-export type Target = { cell: Cell; form: LinearForm }
+export type Target = { cell: KeptCell; form: LinearForm }
 
 /** What the steps so far have made known, beside what the exact answer knows. */
 export type Known = {
@@ -64,7 +64,7 @@ export function knownAtStart(model: Model, settled: Settled, solution: Solution,
     }
     if (states[slot] !== CellState.solvable) return
     known.targets[stream]?.push({
-      cell,
+      cell: keepCell(cell),
       form: denominator ? combine(1, numerator, -value, denominator) : numerator,
     })
   })
