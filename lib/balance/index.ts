@@ -1,5 +1,6 @@
 /** The face of the solver: a checked problem in, states and values out. Pure; runs in a worker, on the server and in scripts. */
 export type { Boundary } from './boundaries/boundary'
+export { type ClosureLine, closureOf } from './boundaries/closure'
 export type { CountedBoundary } from './boundaries/count-boundary'
 export { equationName, type Overlap, overlapSentences } from './boundaries/overlap'
 export { atomicWeights } from './chemistry/atomic-weights'

@@ -37,8 +37,13 @@ export function derive(
   if (targets.length + extents.length === 0) return undefined
   if (region.kind !== 'stream' && sofar.every(({ kind }) => kind !== 'equation')) return undefined
   const all = fill(known, region, rowsOf(book, known, region), tracked)
-  const combinations = combinationsOf(book, known, { targets, extents }, tracked)
-  const used = new Set(combinations.flatMap((its) => its ?? []))
+  const combinations = new Combinations(known, tracked)
+  const used = new Set<number>()
+  const take = (lists: (readonly number[])[] = []): void => {
+    for (const list of new Set(lists)) for (const i of list) used.add(i)
+  }
+  for (const { form } of targets) take(combinations.of(form.columns, form.coefficients))
+  for (const r of extents) take(combinations.of([book.model.extentColumn[r] as number], [1]))
   return found(known, region.kind, region.units, { targets, extents }, all, used)
 }
 
@@ -129,34 +134,40 @@ function covered(book: BookRows, known: Known, region: Region, span: Span): Pick
   return { targets, extents }
 }
 
-/** For each cell, then each extent, the rows that it follows by; undefined where it does not follow. */
-export function combinationsOf(
-  book: BookRows,
-  known: Known,
-  { targets, extents }: Pick<Found, 'targets' | 'extents'>,
-  span: Span,
-): (number[] | undefined)[] {
-  const byColumn = new Map<number, number[] | undefined>()
-  const ofColumn = (j: number): number[] | undefined => {
-    if (!byColumn.has(j)) {
-      const from = span.combination([j], [1])
-      byColumn.set(j, from && heavy(from))
+/** Rows (by number) that single columns and whole forms follow by, each looked for once. */
+export class Combinations {
+  private readonly byColumn = new Map<number, readonly number[] | undefined>()
+
+  constructor(
+    private readonly known: Known,
+    private readonly span: Span,
+  ) {}
+
+  /**
+   * The rows that a form follows by, as one list for each column where each is fixed (most cells: columns are shared by
+   * the cells of a stream), else as one list for the form; undefined where it does not follow.
+   */
+  of(columns: readonly number[], values: readonly number[]): (readonly number[])[] | undefined {
+    const open = withoutKnown(this.known, columns, values)
+    const lists: (readonly number[])[] = []
+    for (const j of open.columns) {
+      const list = this.ofColumn(j)
+      if (list) lists.push(list)
+      else break
     }
-    return byColumn.get(j)
-  }
-  // Most cells follow because each of their columns does, and columns are shared by the cells of a stream.
-  const of = (columns: readonly number[], values: readonly number[]): number[] | undefined => {
-    const open = withoutKnown(known, columns, values)
-    const apart = open.columns.map(ofColumn)
-    if (apart.every((rows) => rows !== undefined)) return [...new Set(apart.flat())]
+    if (lists.length === open.columns.length) return lists
     if (open.columns.length < 2) return undefined
-    const from = span.combination(open.columns, open.values)
-    return from && heavy(from)
+    const from = this.span.combination(open.columns, open.values)
+    return from && [heavy(from)]
   }
-  return [
-    ...targets.map(({ form }) => of(form.columns, form.coefficients)),
-    ...extents.map((r) => ofColumn(book.model.extentColumn[r] as number)),
-  ]
+
+  private ofColumn(j: number): readonly number[] | undefined {
+    if (!this.byColumn.has(j)) {
+      const from = this.span.combination([j], [1])
+      this.byColumn.set(j, from && heavy(from))
+    }
+    return this.byColumn.get(j)
+  }
 }
 
 /** A step's record from the rows it uses. */

@@ -1,7 +1,7 @@
 import { Tracer } from '../conflicts/circuit'
 import type { Settled } from '../conflicts/find-conflicts'
 import type { BookRows, RuleRow } from './book-rows'
-import { combinationsOf, type Found, fill, found } from './derive'
+import { Combinations, type Found, fill, found } from './derive'
 import { isKnownStream, type Known, type Target } from './known'
 import { type Region, rowsOf } from './region'
 import type { Span } from './span'
@@ -97,12 +97,26 @@ function solveApart(book: BookRows, known: Known, all: number[], target: Target,
       return id === undefined ? units : [unitIndex.get(id) as number]
     }),
   )
-  const combinations = combinationsOf(book, known, { targets, extents }, span)
-  const needs = combinations.map((its) => its && new Set(its.flatMap((i) => unitsOfRow[i] as number[])))
+  const combinations = new Combinations(known, span)
+  const lists = [
+    ...targets.map(({ form }) => combinations.of(form.columns, form.coefficients)),
+    ...extents.map((r) => combinations.of([model.extentColumn[r] as number], [1])),
+  ]
+  // Lists are shared by many cells: their units are gathered once.
+  const unitsOfList = new Map<readonly number[], Set<number>>()
+  const gather = (list: readonly number[]): Set<number> => {
+    const before = unitsOfList.get(list)
+    if (before) return before
+    const its = new Set(list.flatMap((i) => unitsOfRow[i] as number[]))
+    unitsOfList.set(list, its)
+    return its
+  }
+  const needs = lists.map((its) => its && unionOf(its.map(gather)))
   const smallest = needs.reduce((best, its) => (its && (!best || its.size < best.size) ? its : best), undefined)
   if (!smallest) return undefined
   const within = needs.map((its) => its !== undefined && [...its].every((u) => smallest.has(u)))
-  const used = new Set(combinations.flatMap((its, k) => (within[k] ? (its as number[]) : [])))
+  const kept = new Set(lists.flatMap((its, k) => (within[k] ? (its as (readonly number[])[]) : [])))
+  const used = new Set([...kept].flat())
   const boundary = [...smallest].sort((a, b) => a - b)
   return found(
     known,
@@ -115,4 +129,10 @@ function solveApart(book: BookRows, known: Known, all: number[], target: Target,
     rows,
     used,
   )
+}
+
+function unionOf(sets: readonly Set<number>[]): Set<number> {
+  const union = new Set<number>()
+  for (const set of new Set(sets)) for (const u of set) union.add(u)
+  return union
 }
