@@ -84,7 +84,8 @@ export function findWorkings(model: Model, settled: Settled, solution: Solution,
   }
   for (;;) {
     const found = next() ?? reach(book, known, settled, tools.tracked) ?? openBlock(book, known, settled.resolved.left)
-    if (!found) return work
+    // A step without finds would never end.
+    if (!found || found.targets.length + found.extents.length === 0) return work
     record(book, known, work, found, solution)
     const touched = new Set(found.targets.map(({ cell }) => cell.stream))
     for (const r of found.extents)
