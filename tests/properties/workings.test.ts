@@ -2,9 +2,9 @@ import { readdirSync, readFileSync } from 'node:fs'
 import { join } from 'node:path'
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { explain, type Problem, type Result, solve, toResult } from '@/lib/balance'
+import { explain, type Given, type Problem, type Result, solve, toResult } from '@/lib/balance'
 import { parseProblem } from '@/lib/book/problem-file'
-import { type RandomBookOptions, randomBook } from './random-book'
+import { generator, type RandomBookOptions, randomBook } from './random-book'
 import { Redo, type Truth } from './redo-step'
 
 /** The same books on every run; TALLYBROOK_SEED=… draws others. */
@@ -142,4 +142,57 @@ describe('workings of random books with a hidden truth', () => {
         parameters,
       )
     })
+})
+
+describe('workings of one stream without a unit', () => {
+  const masses = { A: 18, B: 30, C: 44, D: 58.5 }
+  const ids = Object.keys(masses) as (keyof typeof masses)[]
+
+  /** The flow, a fraction and two ratios of groups, at a composition drawn at random. */
+  function oneStream(seed: number): Problem {
+    const random = generator(seed)
+    const basis = random() < 0.5 ? 'mass' : 'mole'
+    const flows = ids.map(() => 10 ** (3 * random()))
+    const amounts = (of: 'mass' | 'mole'): number[] =>
+      flows.map((n, c) => {
+        const mass = masses[ids[c] as keyof typeof masses]
+        return of === basis ? n : of === 'mass' ? n * mass : n / mass
+      })
+    const total = (of: 'mass' | 'mole', group: readonly string[] = ids): number =>
+      amounts(of).reduce((sum, n, c) => sum + (group.includes(ids[c] as string) ? n : 0), 0)
+    const ratio = (parts: string[], over?: string[]): Given => {
+      const of = random() < 0.5 ? 'mass' : 'mole'
+      const quantity = of === 'mass' ? 'groupMassRatio' : 'groupMoleRatio'
+      return { stream: 'S', quantity, parts, ...(over && { over }), value: total(of, parts) / total(of, over) }
+    }
+    return {
+      format: 'tallybrook/1',
+      name: `stream ${seed}`,
+      basis,
+      flowUnit: basis === 'mass' ? 'kg/h' : 'kmol/h',
+      components: ids.map((id) => ({ id, molarMass: masses[id] })),
+      streams: [{ id: 'S' }],
+      units: [],
+      links: {},
+      givens: [
+        { stream: 'S', quantity: 'flow', value: total(basis) },
+        { stream: 'S', quantity: 'massFraction', component: 'A', value: total('mass', ['A']) / total('mass') },
+        random() < 0.5 ? ratio(['A', 'B'], ['C', 'D']) : ratio(['A', 'B']),
+        random() < 0.5 ? ratio(['B', 'C'], ['A', 'D']) : ratio(['C'], ['B', 'D']),
+      ],
+    }
+  }
+
+  it('the flow, a fraction and two ratios of groups: every cell is found', () => {
+    fc.assert(
+      fc.property(fc.nat(1e9), (seed) => {
+        const problem = oneStream(seed)
+        const result = resultOf(problem)
+        expect(result.summary.unknown).toBe(0)
+        expect(result.workings.map(({ kind }) => kind)).not.toContain('simultaneous')
+        expectCovered(result)
+      }),
+      parameters,
+    )
+  })
 })
