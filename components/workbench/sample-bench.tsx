@@ -5,6 +5,7 @@ import { useState } from 'react'
 import { buttonClasses } from '@/components/ui/button'
 import { notifyProblem } from '@/components/ui/toast'
 import { useLocalBook } from '@/hooks/use-local-book'
+import { usePanelsWorker } from '@/hooks/use-panels'
 import { useSolver } from '@/hooks/use-solver'
 import type { BookRecord } from '@/lib/book/kinds'
 import { inOrder } from '@/lib/book/state'
@@ -15,10 +16,12 @@ export function SampleBench({ records }: { records: readonly BookRecord[] }) {
   const book = useLocalBook(records, notifyProblem)
   const [caseId] = useState(() => inOrder(book.state.case)[0]?.id ?? '')
   const solver = useSolver(book.state, caseId)
+  const panels = usePanelsWorker(book.state, caseId, solver)
   return (
     <Workbench
       book={book}
       solver={solver}
+      panels={panels}
       caseId={caseId}
       crumb={{ label: 'Tallybrook', href: '/' }}
       kept="In this page only"

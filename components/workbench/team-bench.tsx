@@ -3,6 +3,7 @@
 import { useState } from 'react'
 import { notifyProblem } from '@/components/ui/toast'
 import { type OpenedBook, useBook } from '@/hooks/use-book'
+import { usePanelsWorker } from '@/hooks/use-panels'
 import { useSolver } from '@/hooks/use-solver'
 import { inOrder } from '@/lib/book/state'
 import type { Digits } from './book-view'
@@ -22,10 +23,12 @@ export function TeamBench({ opened, crumb, readOnly, decimal, digits }: TeamBenc
   const book = useBook(opened, notifyProblem)
   const [caseId] = useState(() => inOrder(book.state.case)[0]?.id ?? '')
   const solver = useSolver(book.state, caseId)
+  const panels = usePanelsWorker(book.state, caseId, solver)
   return (
     <Workbench
       book={book}
       solver={solver}
+      panels={panels}
       caseId={caseId}
       decimal={decimal}
       digits={digits}

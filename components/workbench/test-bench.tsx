@@ -3,8 +3,11 @@ import userEvent from '@testing-library/user-event'
 import { useMemo } from 'react'
 import { vi } from 'vitest'
 import type { BookHandle } from '@/hooks/book-handle'
+import { PanelBook } from '@/hooks/panel-book'
+import type { PanelPort } from '@/hooks/panels-client'
 import { type SolverHandle, solvedCase } from '@/hooks/solver-handle'
 import { useLocalBook } from '@/hooks/use-local-book'
+import { usePanelsWorker } from '@/hooks/use-panels'
 import { solve } from '@/lib/balance'
 import { fromProblem } from '@/lib/book/from-problem'
 import type { BookRecord } from '@/lib/book/kinds'
@@ -31,6 +34,18 @@ function useSolverHere(state: BookState, caseId: string): SolverHandle {
   }, [state, caseId])
 }
 
+/** The second worker, likewise. */
+function panelsHere(): PanelPort {
+  const book = new PanelBook()
+  const port: PanelPort = {
+    postMessage: (message) => port.onmessage?.({ data: book.answer(message) } as MessageEvent),
+    terminate: () => {},
+    onmessage: null,
+    onerror: null,
+  }
+  return port
+}
+
 type Held = { book: BookHandle | null; refusals: string[] }
 
 function Bench({ records, mayEdit, held }: { records: readonly BookRecord[]; mayEdit: boolean; held: Held }) {
@@ -38,7 +53,9 @@ function Bench({ records, mayEdit, held }: { records: readonly BookRecord[]; may
   const book = mayEdit ? local : { ...local, mayEdit: false, edit: () => 'Your role does not edit it.' }
   held.book = book
   const caseId = inOrder(book.state.case)[0]?.id ?? ''
-  return <Workbench book={book} solver={useSolverHere(book.state, caseId)} caseId={caseId} />
+  const solver = useSolverHere(book.state, caseId)
+  const panels = usePanelsWorker(book.state, caseId, solver, panelsHere, 0)
+  return <Workbench book={book} solver={solver} panels={panels} caseId={caseId} />
 }
 
 /** A workbench over a book in memory, with ways to find its cells by what a screen reader says. */

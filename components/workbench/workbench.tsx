@@ -7,8 +7,10 @@ import { Caution } from '@/components/ui/caution'
 import { notifyProblem } from '@/components/ui/toast'
 import type { BookHandle } from '@/hooks/book-handle'
 import { type GridEdit, type GridPlace, NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
+import type { PanelsClient } from '@/hooks/panels-client'
 import type { SolverHandle } from '@/hooks/solver-handle'
 import { useGridCursor } from '@/hooks/use-grid-cursor'
+import { PanelsContext } from '@/hooks/use-panels'
 import { inOrder } from '@/lib/book/state'
 import { BenchBody } from './bench-body'
 import { BenchHeader } from './bench-header'
@@ -31,6 +33,8 @@ import { useWave } from './use-wave'
 export type WorkbenchProps = {
   book: BookHandle
   solver: SolverHandle
+  /** The second worker, for what somebody looks at. */
+  panels: PanelsClient
   caseId: string
   crumb?: { label: string; href: string } | null
   /** What is said while nothing waits to be sent. */
@@ -144,83 +148,85 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
     event.preventDefault()
   }
   return (
-    // biome-ignore lint/a11y/noStaticElementInteractions: F6 goes round the parts from wherever the focus is
-    <div
-      ref={root}
-      onKeyDown={onKeyDown}
-      className="flex h-(--page-height) min-h-96 flex-col gap-2.5 px-5 pt-3 pb-2 max-sm:gap-2 max-sm:px-2.5 max-sm:pt-2"
-    >
-      <BenchHeader
-        book={book}
-        view={view}
-        desk={desk}
-        crumb={crumb}
-        kept={kept}
-        downloadHref={props.downloadHref ?? null}
+    <PanelsContext value={props.panels}>
+      {/* biome-ignore lint/a11y/noStaticElementInteractions: F6 goes round the parts from wherever the focus is */}
+      <div
+        ref={root}
+        onKeyDown={onKeyDown}
+        className="flex h-(--page-height) min-h-96 flex-col gap-2.5 px-5 pt-3 pb-2 max-sm:gap-2 max-sm:px-2.5 max-sm:pt-2"
       >
-        {props.headerEnd}
-      </BenchHeader>
-      {props.readOnly ? <p className="text-sm text-ink-2">{props.readOnly}</p> : null}
-      <SaveTrouble save={book.save} state={book.state} />
-      <Strip
-        view={view}
-        stale={solver.stale && solver.solved !== null}
-        trouble={solver.trouble}
-        onPanel={desk.openPanel}
-      />
-      <BenchBody
-        view={view}
-        desk={desk}
-        history={book.history}
-        table={table}
-        links={links}
-        tableCursor={tableCursor}
-        linksCursor={linksCursor}
-        streamIds={streamIds}
-        wave={wave}
-        panel={panel}
-        onPanel={setPanel}
-        onPane={setPane}
-        shown={{ pane: shownPane, place: cursor.selection.active }}
-        onStream={(streamId) => desk.show('table', { row: 'tag', column: streamId })}
-      />
-      <footer>
-        <Caution />
-      </footer>
-      {offer ? (
-        <OfferNote
-          offer={offer}
-          cellId={cellId(`grid-${offer.pane}`, offer.place.row, offer.place.column)}
-          onDone={() => setOffer(null)}
+        <BenchHeader
+          book={book}
+          view={view}
+          desk={desk}
+          crumb={crumb}
+          kept={kept}
+          downloadHref={props.downloadHref ?? null}
+        >
+          {props.headerEnd}
+        </BenchHeader>
+        {props.readOnly ? <p className="text-sm text-ink-2">{props.readOnly}</p> : null}
+        <SaveTrouble save={book.save} state={book.state} />
+        <Strip
+          view={view}
+          stale={solver.stale && solver.solved !== null}
+          trouble={solver.trouble}
+          onPanel={desk.openPanel}
         />
-      ) : null}
-      <PointMenu
-        at={menu?.at ?? null}
-        label="Rows and columns"
-        onShut={() => {
-          setMenu(null)
-          backToCell(shownPane)
-        }}
-      >
-        {menu ? (
-          <PlaceMenu
-            pane={menu.pane}
-            range={(menu.pane === 'table' ? tableCursor : linksCursor).range}
-            view={view}
-            desk={desk}
+        <BenchBody
+          view={view}
+          desk={desk}
+          history={book.history}
+          table={table}
+          links={links}
+          tableCursor={tableCursor}
+          linksCursor={linksCursor}
+          streamIds={streamIds}
+          wave={wave}
+          panel={panel}
+          onPanel={setPanel}
+          onPane={setPane}
+          shown={{ pane: shownPane, place: cursor.selection.active }}
+          onStream={(streamId) => desk.show('table', { row: 'tag', column: streamId })}
+        />
+        <footer>
+          <Caution />
+        </footer>
+        {offer ? (
+          <OfferNote
+            offer={offer}
+            cellId={cellId(`grid-${offer.pane}`, offer.place.row, offer.place.column)}
+            onDone={() => setOffer(null)}
           />
         ) : null}
-      </PointMenu>
-      <BenchDialogs
-        request={dialog}
-        view={view}
-        desk={desk}
-        onShut={() => {
-          setDialog(null)
-          backToCell(shownPane)
-        }}
-      />
-    </div>
+        <PointMenu
+          at={menu?.at ?? null}
+          label="Rows and columns"
+          onShut={() => {
+            setMenu(null)
+            backToCell(shownPane)
+          }}
+        >
+          {menu ? (
+            <PlaceMenu
+              pane={menu.pane}
+              range={(menu.pane === 'table' ? tableCursor : linksCursor).range}
+              view={view}
+              desk={desk}
+            />
+          ) : null}
+        </PointMenu>
+        <BenchDialogs
+          request={dialog}
+          view={view}
+          desk={desk}
+          onShut={() => {
+            setDialog(null)
+            backToCell(shownPane)
+          }}
+        />
+      </div>
+    </PanelsContext>
   )
 }
 
