@@ -1,4 +1,5 @@
 import { countBoundary, createSolver, explain, measureNext, type Solution } from '@/lib/balance'
+import { cannotOf } from '@/lib/book/cannot-measure'
 import { apply } from '@/lib/book/change'
 import type { BookProblem } from '@/lib/book/problem-draft'
 import { type BookState, emptyState, stateOf } from '@/lib/book/state'
@@ -13,7 +14,7 @@ type Answerers = { [K in PanelKind]: (worked: Worked, question: Panels[K]['quest
 const answerers: Answerers = {
   explain: ({ book, solution }, question) => explain(book.problem, solution, question),
   boundary: ({ book, solution }, { units }) => countBoundary(book.problem, solution, units) ?? null,
-  next: ({ book }) => measureNext(book.problem),
+  next: ({ book, state }) => measureNext(book.problem, { cannot: cannotOf(state) }),
 }
 
 /** The book as the second worker holds it, and its answers. Apart from the worker, so that tests ask it in their own thread. */

@@ -13,6 +13,7 @@ import type { GridCursor } from '@/hooks/use-grid-cursor'
 import type { BookView } from './book-view'
 import { CellCard } from './card/cell-card'
 import type { Desk } from './desk'
+import { NextPanel } from './next/next-panel'
 import { NotesPanel, noteLines } from './notes-panel'
 import { ChecksPanel } from './odds/checks-panel'
 import { OddsPanel } from './odds/odds-panel'
@@ -81,6 +82,7 @@ export function BenchBody(props: BenchBodyProps) {
                     counts={{
                       connections: view.plant.length,
                       rules: view.state.rule.size + view.state.reaction.size,
+                      next: 0,
                       odds: view.solved?.solution.conflicts.length ?? 0,
                       checks: view.solved?.solution.checks?.length ?? 0,
                       notes: noteLines(view).length,
@@ -108,6 +110,7 @@ export function BenchBody(props: BenchBodyProps) {
                     {panel === 'rules' ? (
                       <RulesPanel view={view} desk={desk} draft={rulesDraft} onDraft={setRulesDraft} />
                     ) : null}
+                    {panel === 'next' ? <NextPanel view={view} desk={desk} /> : null}
                     {panel === 'checks' ? <ChecksPanel view={view} desk={desk} /> : null}
                     {panel === 'odds' ? <OddsPanel view={view} desk={desk} /> : null}
                     {panel === 'notes' ? <NotesPanel view={view} onStream={props.onStream} /> : null}

@@ -1,3 +1,4 @@
+import type { GridPlace } from '@/hooks/grid-model'
 import type { SolvedCase } from '@/hooks/solver-handle'
 import { measureKey } from '@/lib/balance/measure/measure-name'
 import { type BookUnits, bookUnits, parseFractionUnit } from '@/lib/balance/measure/units-of-measure'
@@ -9,7 +10,7 @@ import { type BookState, bookOf, inOrder } from '@/lib/book/state'
 import { unitKindOf } from '@/lib/book/units'
 import type { NumberStyle } from '@/lib/sheet/format'
 import type { DecimalSign } from '@/lib/sheet/read-number'
-import { type RowPlace, type RowQuantity, rowQuantityOf, rowTitle } from './rows'
+import { type RowPlace, type RowQuantity, rowIdOf, rowQuantityOf, rowTitle } from './rows'
 
 type Given = RecordOf<'given'>
 
@@ -129,6 +130,17 @@ export function rowOfPlace(view: BookView, place: Place): RowPlace | null {
   if (place.component === undefined) return { quantity, componentId: null, measureId: null }
   const component = view.components.find(({ tag }) => tag.trim() === place.component)
   return component ? { quantity, componentId: component.id, measureId: null } : null
+}
+
+/** The stream that the solver names by this tag; null where the book no longer has it. */
+export const streamIdOf = (view: BookView, tag: string | undefined): StreamId | null =>
+  view.streams.find((stream) => stream.tag.trim() === tag)?.id ?? null
+
+/** Where in the stream table a place of the solver stands; null where the book no longer has it. */
+export function gridPlaceOf(view: BookView, place: Place): GridPlace | null {
+  const row = rowOfPlace(view, place)
+  const column = streamIdOf(view, place.stream)
+  return row && column !== null ? { row: rowIdOf(row), column } : null
 }
 
 export const isSameRow = (a: RowPlace, b: RowPlace): boolean =>

@@ -67,7 +67,7 @@ describe('what the card says of a cell', () => {
     openCard(shown, '1', 'A')
     const values = within(screen.getByRole('list', { name: 'Values in the solutions' })).getAllByRole('listitem')
     expect(values.map(({ textContent }) => textContent)).toEqual(['30.00 kg/h', '70.00 kg/h'])
-    expect(stripWords(shown.view).rest).toContain('2 solutions fit what is given')
+    expect(stripWords(shown.view, null).rest).toContain('2 solutions fit what is given')
   })
 
   it('says which conflict holds it back, and leads there', async () => {

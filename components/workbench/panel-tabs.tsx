@@ -2,7 +2,7 @@
 
 import type { KeyboardEvent, ReactNode } from 'react'
 
-export type PanelKey = 'connections' | 'rules' | 'odds' | 'checks' | 'notes'
+export type PanelKey = 'connections' | 'rules' | 'next' | 'odds' | 'checks' | 'notes'
 
 type PanelTabsProps = {
   chosen: PanelKey
@@ -14,6 +14,7 @@ type PanelTabsProps = {
 const titles: [PanelKey, string][] = [
   ['connections', 'Connections'],
   ['rules', 'Rules'],
+  ['next', 'What to measure next'],
   ['odds', 'At odds'],
   ['checks', 'Checks'],
   ['notes', 'Notes'],

@@ -1,3 +1,4 @@
+import type { MeasureNext } from '@/lib/balance'
 import { CellFlag } from '@/lib/balance/solution'
 import { counted, listed } from '@/lib/book/edits/draft'
 import type { BookView } from './book-view'
@@ -7,8 +8,11 @@ export type StripWords = { lead: string; rest: string; trouble: boolean }
 
 const verb = (count: number, one: string, many: string): string => (count === 1 ? one : many)
 
-/** How far the table is and what closes it, in a sentence or two. */
-export function stripWords(view: BookView): StripWords {
+/**
+ * How far the table is and what closes it, in a sentence or two. `next` is what to measure next, best first; null while
+ * it is not known: then nothing is claimed.
+ */
+export function stripWords(view: BookView, next: readonly MeasureNext[] | null): StripWords {
   const { solved, streams, components } = view
   const say = (lead: string, rest = '', trouble = false): StripWords => ({ lead, rest, trouble })
   if (streams.length === 0 || components.length === 0) {
@@ -17,7 +21,7 @@ export function stripWords(view: BookView): StripWords {
   }
   if (!solved) return say('Working out what follows …')
   const { summary, status, conflicts, flags, roots } = solved.solution
-  const { given, solvable, unknown, degreesOfFreedom: wanted, freeScale } = summary
+  const { given, solvable, unknown, freeScale } = summary
   if (status === 'gaveUp') return say('The solver gave up on this table.', 'See the notes for the reason.', true)
   if (status === 'atOdds' || summary.atOdds > 0) {
     const [clash] = conflicts
@@ -40,10 +44,20 @@ export function stripWords(view: BookView): StripWords {
       ? ` ${counted(negative, 'result')} ${verb(negative, 'is', 'are')} negative: a given or a connection is wrong.`
       : ''
   if (unknown === 0) return say(follow, `${from} Nothing is still unknown: the table closes.${doubt}`, negative > 0)
-  const rest = `${from} ${unknown} ${verb(unknown, 'is', 'are')} still unknown; ${counted(wanted, 'more value')} ${verb(wanted, 'closes', 'close')} the table.`
+  const rest = `${from} ${unknown} ${verb(unknown, 'is', 'are')} still unknown${closing(next)}.`
   const [block] = freeScale
   const scale = block
     ? ` No flow is typed among ${listed(block, 4)}: their flows are known only up to a common factor, so type one of them to set the basis.`
     : ''
   return say(follow, `${rest}${several}${scale}${doubt}`, negative > 0)
+}
+
+/** "; 2 more values close the table", or how far what can be measured leads. */
+function closing(next: readonly MeasureNext[] | null): string {
+  if (!next) return ''
+  const [best] = next
+  if (!best) return '; nothing was found that could be measured to settle more'
+  const { length } = best.set
+  if (best.leaves === 0) return `; ${counted(length, 'more value')} ${verb(length, 'closes', 'close')} the table`
+  return `; what can be measured leaves ${best.leaves} of them unknown`
 }

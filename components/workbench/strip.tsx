@@ -2,6 +2,7 @@
 
 import { useEffect, useState } from 'react'
 import { classNames } from '@/components/ui/class-names'
+import { usePanels } from '@/hooks/use-panels'
 import type { BookView } from './book-view'
 import type { PanelKey } from './panel-tabs'
 import { stripWords } from './strip-words'
@@ -11,8 +12,10 @@ type StripProps = { view: BookView; stale: boolean; trouble: string | null; onPa
 /** How far the table is, at all times: one sentence, and the shares of the states under it. */
 export function Strip({ view, stale, trouble, onPanel }: StripProps) {
   const slow = useSlow(stale)
-  const words = stripWords(view)
   const summary = view.solved?.solution.summary
+  const isOpen = summary !== undefined && summary.unknown > 0
+  const next = usePanels('next', isOpen ? {} : null)
+  const words = stripWords(view, next.stale ? null : next.answer)
   const whole = `${words.lead} ${words.rest}`
   const [said, setSaid] = useState('')
   useEffect(() => {
@@ -30,6 +33,14 @@ export function Strip({ view, stale, trouble, onPanel }: StripProps) {
             {' '}
             <button type="button" className="link" onClick={() => onPanel('odds')}>
               See what is at odds
+            </button>
+          </>
+        ) : null}
+        {isOpen ? (
+          <>
+            {' '}
+            <button type="button" className="link" onClick={() => onPanel('next')}>
+              What to measure next
             </button>
           </>
         ) : null}

@@ -30,6 +30,7 @@ export const stream = pgTable(
     pressure: text('pressure'),
     fractions: text('fractions', { enum: ['asTyped', 'scale', 'difference'] }).notNull(),
     differenceComponentId: column.maybeReference('difference_component_id'),
+    cannotMeasure: text('cannot_measure', { enum: ['flow', 'analysis', 'both'] }),
     note: text('note'),
     position: column.number('position'),
   },
@@ -38,6 +39,7 @@ export const stream = pgTable(
     column.oneTag('stream', t),
     column.aboveZero('stream', t.density),
     column.oneOf('stream', t.fractions, ['asTyped', 'scale', 'difference']),
+    column.oneOf('stream', t.cannotMeasure, ['flow', 'analysis', 'both']),
     column.pointsAt('stream', t, t.differenceComponentId, component),
     column.holds(
       'stream',

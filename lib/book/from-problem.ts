@@ -61,6 +61,7 @@ export function fromProblem(problem: Problem, makeId: () => string): BookRecord[
       pressure: null,
       fractions: typeof stream.fractions === 'object' ? 'difference' : (stream.fractions ?? 'asTyped'),
       differenceComponentId: difference === undefined ? null : of(ids.component, difference),
+      cannotMeasure: null,
       note: stream.note ?? null,
       position: index + 1,
     })

@@ -90,6 +90,8 @@ export const streamSchema = z.strictObject({
   /** What to do with typed fractions that do not add up: the person's choice. */
   fractions: z.enum(['asTyped', 'scale', 'difference']),
   differenceComponentId: ref.nullable(),
+  /** What cannot be measured at it, for the list of what to measure next; left out in changes older than this mark. */
+  cannotMeasure: z.enum(['flow', 'analysis', 'both']).nullish(),
   note,
   position,
 })

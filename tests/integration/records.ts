@@ -32,6 +32,7 @@ export const stream = (tag: string, id = newId()): RecordOf<'stream'> => ({
   pressure: null,
   fractions: 'asTyped',
   differenceComponentId: null,
+  cannotMeasure: null,
   note: null,
   position: 1,
 })

@@ -1,6 +1,7 @@
 'use client'
 
 import { Button } from '@/components/ui/button'
+import { isOutOfReach, type Reach, setOutOfReach } from '@/lib/book/cannot-measure'
 import { setFields } from '@/lib/book/edits/fields'
 import { absenceId, newId } from '@/lib/book/ids'
 import type { RecordOf } from '@/lib/book/kinds'
@@ -47,6 +48,7 @@ export function StreamCard({ view, desk, stream }: { view: BookView; desk: Desk;
             Temperature and pressure are carried as notes; nothing is calculated from them.
           </p>
           <FractionChoice view={view} desk={desk} stream={stream} />
+          <OutOfReach view={view} desk={desk} stream={stream} />
           <CommitInput
             label="Note"
             lines
@@ -68,5 +70,29 @@ export function StreamCard({ view, desk, stream }: { view: BookView; desk: Desk;
         </CardSection>
       </fieldset>
     </>
+  )
+}
+
+const reaches: [Reach, string][] = [
+  ['flow', 'Flow cannot be measured'],
+  ['analysis', 'Cannot be analysed'],
+]
+
+/** What is not asked for when the next value to measure is looked for. */
+function OutOfReach({ view, desk, stream }: { view: BookView; desk: Desk; stream: Stream }) {
+  return (
+    <div className="grid gap-1.5">
+      {reaches.map(([reach, label]) => (
+        <label key={reach} className="flex items-center gap-2">
+          <input
+            type="checkbox"
+            className="size-4 accent-(--brook)"
+            checked={isOutOfReach(stream, reach)}
+            onChange={(event) => desk.tryRun(setOutOfReach(view.state, stream.id, reach, event.target.checked, newId))}
+          />
+          {label}
+        </label>
+      ))}
+    </div>
   )
 }

@@ -5,7 +5,7 @@ import { type UsedRef, usedName } from '@/lib/book/edits/ways-out'
 import { givenId } from '@/lib/book/ids'
 import { bookUnitOf, convert } from '@/lib/book/units'
 import { formatNumber } from '@/lib/sheet/format'
-import { type BookView, rowOfPlace, rowStyle, rowUnit } from '../book-view'
+import { type BookView, rowOfPlace, rowStyle, rowUnit, streamIdOf } from '../book-view'
 import { rowIdOf } from '../rows'
 import { placeWords, sentence } from '../words'
 
@@ -55,7 +55,7 @@ export function oddsOf(view: BookView): Odds {
       ...conflict.givens.map((given) => givenMember(view, given)),
       ...conflict.relations.map((relation) => ruleMember(view, relation)),
     ].map((member) => ({ ...member, settles: counts.get(member.key) ?? 1 }))
-    const stream = conflict.code === 'fractionSum' ? streamId(view, conflict.stream) : null
+    const stream = conflict.code === 'fractionSum' ? streamIdOf(view, conflict.stream) : null
     return {
       number: index + 1,
       where: meetingPlace(view, conflict),
@@ -73,9 +73,6 @@ export function bestWithdrawals({ sets }: Odds): OddsMember[] {
   return [...members.values()].filter(({ settles }) => settles === most)
 }
 
-const streamId = (view: BookView, tag: string | undefined): string | null =>
-  view.streams.find((stream) => stream.tag.trim() === tag)?.id ?? null
-
 function meetingPlace(view: BookView, { boundary, stream, component, code }: Conflict): string {
   if (code === 'fractionSum') return `The typed fractions of stream ${stream} do not add up`
   const named = view.components.find(({ tag }) => tag.trim() === component)
@@ -90,7 +87,7 @@ type Clash = Omit<OddsMember, 'settles'>
 export function givenMember(view: BookView, given: Conflict['givens'][number]): Clash {
   const { basis, flowUnit } = view.book
   const row = rowOfPlace(view, given)
-  const stream = streamId(view, given.stream)
+  const stream = streamIdOf(view, given.stream)
   const of = row?.componentId ?? row?.measureId ?? null
   const id = givenId(view.caseId, stream ?? '', given.quantity, of, given.instrument)
   const from = bookUnitOf(given.quantity, basis, flowUnit) ?? ''

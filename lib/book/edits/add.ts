@@ -26,6 +26,7 @@ export function addStreams(state: BookState, added: Added<'stream'>, makeId: Mak
       pressure: null,
       fractions: 'asTyped',
       differenceComponentId: null,
+      cannotMeasure: null,
       note: null,
       ...item,
       ...base,

@@ -1,0 +1,2 @@
+ALTER TABLE "stream" ADD COLUMN "cannot_measure" text;--> statement-breakpoint
+ALTER TABLE "stream" ADD CONSTRAINT "stream_cannot_measure_known" CHECK ("stream"."cannot_measure" in ('flow', 'analysis', 'both'));
