@@ -4,7 +4,7 @@ import { type KeyboardEvent, useEffect, useMemo, useRef, useState } from 'react'
 import { cellId } from '@/components/grid/grid-row'
 import { PointMenu } from '@/components/grid/point-menu'
 import { Caution } from '@/components/ui/caution'
-import { notifyProblem } from '@/components/ui/toast'
+import { notify, notifyProblem } from '@/components/ui/toast'
 import type { BookHandle } from '@/hooks/book-handle'
 import { type GridEdit, type GridPlace, NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
 import type { PanelsClient } from '@/hooks/panels-client'
@@ -24,6 +24,7 @@ import { PlaceMenu } from './place-menu'
 import { backToCell, goToNextRegion } from './regions'
 import { type SectionKey, sectionOf, valueRow } from './rows'
 import { SaveTrouble } from './save-state'
+import { noneWords, seekCell, seekKeys } from './seek-cell'
 import { Strip } from './strip'
 import { tableRows } from './table-cells'
 import { tableSource } from './table-source'
@@ -139,6 +140,13 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
 
   const onKeyDown = (event: KeyboardEvent) => {
     if (event.key === 'F6' && root.current && goToNextRegion(root.current, event.shiftKey)) event.preventDefault()
+    const sought = event.ctrlKey || event.metaKey || event.altKey ? undefined : seekKeys[event.key]
+    if (sought) {
+      const place = seekCell(view, open, tableCursor.selection.active, sought, event.shiftKey)
+      if (place) desk.show('table', place)
+      else notify(noneWords[sought])
+      event.preventDefault()
+    }
     const isTyping = event.target instanceof HTMLInputElement || event.target instanceof HTMLTextAreaElement
     if (event.defaultPrevented || isTyping || !(event.ctrlKey || event.metaKey)) return
     const key = event.key.toLowerCase()
