@@ -106,9 +106,9 @@ describe('any text', () => {
       fc.property(
         fc.oneof(table, fc.string({ maxLength: 400 }), fc.string({ unit: 'binary', maxLength: 300 })),
         (text) => {
-          const start = performance.now()
+          const before = process.cpuUsage()
           const answer = readLabText(text)
-          expect(performance.now() - start).toBeLessThan(5000)
+          expect(process.cpuUsage(before).user / 1e6).toBeLessThan(5)
           if (!answer.ok) expect(answer.problems.length).toBeGreaterThan(0)
           else expect(answer.reading.samples.length).toBeGreaterThan(0)
         },

@@ -52,11 +52,10 @@ describe('run', () => {
     expect(ended).toMatchObject({ code: 3, output: expect.stringMatching(/out[\s\S]*err|err[\s\S]*out/) })
   })
   it('ends what takes too long, and what that has started', async () => {
-    const began = Date.now()
-    const ended = await run('/bin/sh', ['-c', 'sleep 60 & wait'], { limitMs: 300 })
+    // Were it not ended, this test would run into its own limit.
+    const ended = await run('/bin/sh', ['-c', 'sleep 300 & wait'], { limitMs: 300 })
     expect(ended.code).not.toBe(0)
     expect(ended.output).toContain('without finishing')
-    expect(Date.now() - began).toBeLessThan(10_000)
   })
   it('says in a sentence that a program is not there', async () => {
     await expect(run('no-such-program-here', [])).rejects.toBeInstanceOf(Trouble)

@@ -11,10 +11,14 @@ import { sum, tallyOf } from './test-report.mjs'
 /** @typedef {import('./test-report.mjs').Tally} Tally */
 /** @typedef {(context: { files: string[], signal: AbortSignal }) => Promise<Tally>} Stage */
 
-const limitMs = 10 * 60_000
+/** What a step takes at most on a machine that has much else to do. */
+const limitMs = 20 * 60_000
 
 /** Colours for a terminal, none for a log. */
 const colours = process.stdout.isTTY ? { FORCE_COLOR: '1' } : { NO_COLOR: '1' }
+
+/** On two cores the default is one worker. */
+const everyCore = ['--maxWorkers=100%']
 
 /** In the order they run. @type {Record<string, Stage>} */
 export const stages = {
@@ -25,8 +29,8 @@ export const stages = {
       await step('types', ['typescript/bin/tsc', '--noEmit'], signal),
       await vitest('architecture', [], signal),
     ]),
-  unit: ({ files, signal }) => vitest('unit', files, signal),
-  component: ({ files, signal }) => vitest('component', files, signal),
+  unit: ({ files, signal }) => vitest('unit', [...everyCore, ...files], signal),
+  component: ({ files, signal }) => vitest('component', [...everyCore, ...files], signal),
   integration: async ({ files, signal }) => {
     if (!process.env.TEST_DATABASE_URL) await postgresPrograms({ signal })
     return vitest('integration', files, signal)
@@ -50,13 +54,13 @@ async function step(name, [program = '', ...args], signal) {
   return { passed: 0, failed: isRight ? 0 : 1, skipped: 0 }
 }
 
-/** Runs one vitest project, its lines shown as they come. @param {string} project @param {string[]} files @param {AbortSignal} signal */
-async function vitest(project, files, signal) {
+/** Runs one vitest project, its lines shown as they come. @param {string} project @param {string[]} words files and options @param {AbortSignal} signal */
+async function vitest(project, words, signal) {
   const report = inCheckout('test-results', `${project}.json`)
   mkdirSync(inCheckout('test-results'), { recursive: true })
   rmSync(report, { force: true })
   const reporters = ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`]
-  const args = [moduleProgram('vitest/vitest.mjs'), 'run', '--project', project, ...reporters, ...files]
+  const args = [moduleProgram('vitest/vitest.mjs'), 'run', '--project', project, ...reporters, ...words]
   const env = { ...process.env, ...colours }
   const ended = await run(process.execPath, args, { env, signal, limitMs, show: true })
   return tallyOf(report, ended.code)

@@ -1,5 +1,6 @@
 import { randomBytes } from 'node:crypto'
-import { beforeAll, describe, expect, it } from 'vitest'
+import { Client } from 'pg'
+import { beforeAll, describe, expect, it, vi } from 'vitest'
 import type { BookRecord, RecordOf } from '@/lib/book/kinds'
 import { listChanges } from '@/lib/data/book/list-changes'
 import {
@@ -33,16 +34,25 @@ function plant(streams: number, components: number, caseId: string): BookRecord[
   return [...columns, ...rows, ...absences, ...rows.map(({ id }, i) => flow(caseId, id, i + 0.1))]
 }
 
+/** How many statements the database is sent meanwhile: what a large change costs, whatever else the machine does. */
+async function statementsOf(work: () => Promise<unknown>): Promise<number> {
+  const query = vi.spyOn(Client.prototype, 'query')
+  try {
+    await work()
+    return query.mock.calls.length
+  } finally {
+    query.mockRestore()
+  }
+}
+
 describe('a large change', () => {
-  it('of 5,000 records is written, read and taken back in seconds', async () => {
+  it('of 5,000 records is written in few statements, read and taken back', async () => {
     const { engineer } = at.people
     const book = await makeBook(at)
     const records = plant(714, 50, await baseCase(engineer, book))
     expect(records.length).toBeGreaterThan(5000)
     const before = await rowsOf(book)
-    const started = performance.now()
-    await mustWrite(engineer, book, change({ create: records }))
-    const written = performance.now()
+    const statements = await statementsOf(() => mustWrite(engineer, book, change({ create: records })))
     expect(await rowsOf(book)).toEqual(sorted([...before, ...records]))
     const edits = records.filter((record): record is RecordOf<'stream'> => record.kind === 'stream')
     await mustWrite(
@@ -57,7 +67,8 @@ describe('a large change', () => {
     expect(await rowsOf(book)).toEqual(sorted([...before, ...after]))
     await mustWrite(engineer, book, change({ remove: after }))
     expect(await rowsOf(book)).toEqual(before)
-    expect(written - started, 'ms to write').toBeLessThan(10_000)
+    expect(statements).toBeGreaterThan(0)
+    expect(statements).toBeLessThan(25)
   })
 
   it('of 20,000 records, more than a statement takes, stays within its limits', async () => {
@@ -69,11 +80,9 @@ describe('a large change', () => {
       'tag' in record ? { ...record, tag: `x${record.tag}` } : record,
     ) as BookRecord[]
     expect(records.length + others.length).toBeGreaterThan(18_000)
-    const started = performance.now()
-    await mustWrite(engineer, book, change({ create: [...records, ...others] }))
-    const ms = performance.now() - started
+    const statements = await statementsOf(() => mustWrite(engineer, book, change({ create: [...records, ...others] })))
     expect(await rowsOf(book)).toHaveLength(records.length + others.length + 2)
-    expect(ms, 'ms to write').toBeLessThan(30_000)
+    expect(statements).toBeLessThan(30)
   })
 
   it('and its neighbours are listed a page at a time', async () => {
