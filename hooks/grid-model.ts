@@ -52,6 +52,8 @@ export type CellView = {
   readings?: number
   /** Why it is marked. */
   description?: string
+  /** A cap over the cell: the boundary that is looked at is crossed here. The label says so too. */
+  capped?: boolean
 }
 
 /** Everything that the grid asks of its owner. Replaced whole when what it shows changes. */

@@ -38,6 +38,7 @@ export type GridCellProps = {
   kept?: 'check' | 'withdrawn' | 'difference' | undefined
   readings?: number | undefined
   description?: string | undefined
+  capped?: boolean | undefined
   selected: boolean
   tabStop: boolean
   readOnly: boolean
@@ -78,6 +79,7 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
         mark === 'broken' && 'grid-broken',
         props.bold && 'grid-bold',
         props.selected && 'grid-selected',
+        props.capped && 'grid-capped',
         props.wave !== undefined && 'cell-settles',
       )}
       style={{

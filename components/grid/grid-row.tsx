@@ -62,6 +62,7 @@ export const GridRowView = memo(function GridRowView(props: GridRowProps) {
         kept={view.kept}
         readings={view.readings}
         description={view.description}
+        capped={view.capped}
         selected={index >= props.selectedFrom && index <= props.selectedTo}
         tabStop={index === tabStop}
         readOnly={source.isReadOnly(place)}

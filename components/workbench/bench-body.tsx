@@ -18,6 +18,12 @@ import { NotesPanel, noteLines } from './notes-panel'
 import { ChecksPanel } from './odds/checks-panel'
 import { OddsPanel } from './odds/odds-panel'
 import { Legend, type PanelKey, PanelTabs } from './panel-tabs'
+import { BoundariesPanel } from './reasons/boundaries-panel'
+import { ClosurePanel } from './reasons/closure-panel'
+import { MarkNote } from './reasons/mark-note'
+import { useReasons } from './reasons/use-reasons'
+import { WorkingsPanel } from './reasons/workings-panel'
+import { readRow } from './rows'
 import type { RulesDraft } from './rules/rules-as-text'
 import { RulesPanel } from './rules/rules-panel'
 import { useNarrow } from './use-reader'
@@ -37,6 +43,8 @@ type BenchBodyProps = {
   onPane: (pane: 'table' | 'links') => void
   shown: { pane: 'table' | 'links'; place: GridPlace }
   onStream: (streamId: string) => void
+  /** Per cent that a closure may be off. */
+  closureLimit: number
 }
 
 /** The sheet with its two panes, and the cell card beside it or, on a narrow screen, under it. */
@@ -45,10 +53,21 @@ export function BenchBody(props: BenchBodyProps) {
   const narrow = useNarrow()
   const [cardOpen, setCardOpen] = useState(false)
   const [rulesDraft, setRulesDraft] = useState<RulesDraft>({ asText: false, typed: null })
-  const card = <CellCard view={view} desk={desk} pane={shown.pane} place={shown.place} />
+  const cardIsOpen = !narrow || cardOpen
+  const { reasons, panes, onKeyDownCapture } = useReasons({
+    view,
+    panes: { table: props.table, links: props.links, wave: props.wave },
+    panel,
+    onPanel: props.onPanel,
+    cardAsks: cardIsOpen && shown.pane === 'table' && readRow(shown.place.row)?.kind === 'value',
+  })
+  const card = <CellCard view={view} desk={desk} pane={shown.pane} place={shown.place} reasons={reasons} />
   const shared = { undo: history.undo, redo: history.redo }
   return (
-    <div className="flex min-h-0 flex-1 gap-3.5 max-[899px]:flex-col max-[899px]:gap-2">
+    <div
+      onKeyDownCapture={onKeyDownCapture}
+      className="flex min-h-0 flex-1 gap-3.5 max-[899px]:flex-col max-[899px]:gap-2"
+    >
       <section className="sheet min-h-0 min-w-0 flex-1 overflow-hidden" aria-label="Sheet">
         <GridSheet streamIds={props.streamIds}>
           {(columns, scroll) => (
@@ -61,12 +80,12 @@ export function BenchBody(props: BenchBodyProps) {
                     <GridPane
                       {...shared}
                       id="grid-table"
-                      source={props.table}
+                      source={panes.table}
                       columns={columns}
                       scroll={scroll}
                       cursor={props.tableCursor}
                       onEnter={() => props.onPane('table')}
-                      wave={props.wave}
+                      wave={panes.wave}
                     />
                   )}
                 </div>
@@ -90,6 +109,7 @@ export function BenchBody(props: BenchBodyProps) {
                     onChoose={props.onPanel}
                   >
                     <Legend />
+                    <MarkNote reasons={reasons} />
                     {view.mayEdit && panel === 'connections' ? (
                       <Button
                         size="small"
@@ -111,6 +131,24 @@ export function BenchBody(props: BenchBodyProps) {
                       <RulesPanel view={view} desk={desk} draft={rulesDraft} onDraft={setRulesDraft} />
                     ) : null}
                     {panel === 'next' ? <NextPanel view={view} desk={desk} /> : null}
+                    {panel === 'boundaries' ? (
+                      <BoundariesPanel
+                        view={view}
+                        handle={reasons.handle}
+                        marked={reasons.marked}
+                        onMark={reasons.onMark}
+                      />
+                    ) : null}
+                    {panel === 'workings' ? (
+                      <WorkingsPanel
+                        view={view}
+                        desk={desk}
+                        handle={reasons.handle}
+                        at={reasons.at}
+                        onWalk={reasons.onWalk}
+                      />
+                    ) : null}
+                    {panel === 'closure' ? <ClosurePanel view={view} limit={props.closureLimit} /> : null}
                     {panel === 'checks' ? <ChecksPanel view={view} desk={desk} /> : null}
                     {panel === 'odds' ? <OddsPanel view={view} desk={desk} /> : null}
                     {panel === 'notes' ? <NotesPanel view={view} onStream={props.onStream} /> : null}
@@ -118,7 +156,7 @@ export function BenchBody(props: BenchBodyProps) {
                       <GridPane
                         {...shared}
                         id="grid-links"
-                        source={props.links}
+                        source={panes.links}
                         columns={columns}
                         scroll={scroll}
                         cursor={props.linksCursor}

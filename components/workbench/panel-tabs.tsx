@@ -2,18 +2,31 @@
 
 import type { KeyboardEvent, ReactNode } from 'react'
 
-export type PanelKey = 'connections' | 'rules' | 'next' | 'odds' | 'checks' | 'notes'
+export type PanelKey =
+  | 'connections'
+  | 'boundaries'
+  | 'workings'
+  | 'rules'
+  | 'closure'
+  | 'next'
+  | 'odds'
+  | 'checks'
+  | 'notes'
 
 type PanelTabsProps = {
   chosen: PanelKey
-  counts: Record<PanelKey, number>
+  /** Left out: none to be counted. */
+  counts: Partial<Record<PanelKey, number>>
   onChoose: (key: PanelKey) => void
   children?: ReactNode
 }
 
 const titles: [PanelKey, string][] = [
   ['connections', 'Connections'],
+  ['boundaries', 'Boundaries'],
+  ['workings', 'Workings'],
   ['rules', 'Rules'],
+  ['closure', 'Closure'],
   ['next', 'What to measure next'],
   ['odds', 'At odds'],
   ['checks', 'Checks'],
@@ -53,7 +66,7 @@ export function PanelTabs({ chosen, counts, onChoose, children }: PanelTabsProps
             onKeyDown={onKeyDown}
           >
             {title}
-            {counts[key] > 0 && key !== 'connections' ? (
+            {(counts[key] ?? 0) > 0 && key !== 'connections' ? (
               <span
                 className={`ms-1.5 rounded-full px-1.5 text-2xs ${key === 'odds' ? 'bg-odds text-odds-ink' : 'bg-hair text-ink-2'}`}
               >

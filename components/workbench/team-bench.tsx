@@ -16,10 +16,12 @@ type TeamBenchProps = {
   readOnly: string | null
   decimal: DecimalChoice
   digits: Digits
+  /** Per cent. */
+  closureLimit: number
 }
 
 /** A book kept on the server, at work. */
-export function TeamBench({ opened, crumb, readOnly, decimal, digits }: TeamBenchProps) {
+export function TeamBench({ opened, crumb, readOnly, decimal, digits, closureLimit }: TeamBenchProps) {
   const book = useBook(opened, notifyProblem)
   const [caseId] = useState(() => inOrder(book.state.case)[0]?.id ?? '')
   const solver = useSolver(book.state, caseId)
@@ -32,6 +34,7 @@ export function TeamBench({ opened, crumb, readOnly, decimal, digits }: TeamBenc
       caseId={caseId}
       decimal={decimal}
       digits={digits}
+      closureLimit={closureLimit}
       crumb={crumb}
       downloadHref={`/api/books/${opened.id}/table.xlsx`}
       {...(readOnly === null ? {} : { readOnly })}

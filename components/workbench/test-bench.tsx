@@ -1,3 +1,5 @@
+import { readFileSync } from 'node:fs'
+import { join } from 'node:path'
 import { render, screen } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
 import { useMemo } from 'react'
@@ -8,7 +10,7 @@ import type { PanelPort } from '@/hooks/panels-client'
 import { type SolverHandle, solvedCase } from '@/hooks/solver-handle'
 import { useLocalBook } from '@/hooks/use-local-book'
 import { usePanelsWorker } from '@/hooks/use-panels'
-import { solve } from '@/lib/balance'
+import { type Problem, solve } from '@/lib/balance'
 import { fromProblem } from '@/lib/book/from-problem'
 import type { BookRecord } from '@/lib/book/kinds'
 import { starters } from '@/lib/book/starters'
@@ -23,6 +25,13 @@ vi.setConfig({ testTimeout: 30_000 })
 export function saltRecords(): BookRecord[] {
   let next = 0
   return fromProblem(starters.salt.problem, () => `salt-${++next}`)
+}
+
+/** A demo plant of the test fixtures, likewise. */
+export function demoRecords(name: string): BookRecord[] {
+  const file = join(import.meta.dirname, `../../tests/fixtures/demo/${name}.book.json`)
+  let next = 0
+  return fromProblem(JSON.parse(readFileSync(file, 'utf8')) as Problem, () => `demo-${++next}`)
 }
 
 /** The real solver, at once and in the same thread: happy-dom has no workers. */

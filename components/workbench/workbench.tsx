@@ -46,6 +46,8 @@ export type WorkbenchProps = {
   decimal?: DecimalChoice
   /** Significant digits that the team has chosen. Keep the same object from one drawing to the next. */
   digits?: Digits
+  /** Per cent that a closure may be off before it is marked. */
+  closureLimit?: number
   downloadHref?: string | null
   headerEnd?: React.ReactNode
 }
@@ -196,6 +198,7 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
           onPane={setPane}
           shown={{ pane: shownPane, place: cursor.selection.active }}
           onStream={(streamId) => desk.show('table', { row: 'tag', column: streamId })}
+          closureLimit={props.closureLimit ?? 0.1}
         />
         <footer>
           <Caution />

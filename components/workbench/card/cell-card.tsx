@@ -4,6 +4,7 @@ import { type GridPlace, NAME_COLUMN, UNIT_COLUMN } from '@/hooks/grid-model'
 import type { BookView } from '../book-view'
 import type { Desk } from '../desk'
 import { directionAt } from '../links-source'
+import type { Reasons } from '../reasons/reasons'
 import { readRow } from '../rows'
 import { CardHead } from './card-parts'
 import { ComponentCard } from './component-card'
@@ -11,10 +12,16 @@ import { StreamCard } from './stream-card'
 import { UnitCard } from './unit-card'
 import { ValueCard } from './value-card'
 
-type CellCardProps = { view: BookView; desk: Desk; pane: 'table' | 'links'; place: GridPlace }
+type CellCardProps = {
+  view: BookView
+  desk: Desk
+  pane: 'table' | 'links'
+  place: GridPlace
+  reasons?: Reasons | undefined
+}
 
 /** What the card shows follows the cursor: a cell, a stream, a component, a unit or one connection. */
-export function CellCard({ view, desk, pane, place }: CellCardProps) {
+export function CellCard({ view, desk, pane, place, reasons }: CellCardProps) {
   const { state } = view
   const stream = state.stream.get(place.column)
   if (pane === 'links') {
@@ -38,7 +45,16 @@ export function CellCard({ view, desk, pane, place }: CellCardProps) {
   const ref = readRow(place.row)
   if (!ref) return <Nothing />
   if (stream && ref.kind === 'value')
-    return <ValueCard key={`${place.row}~${place.column}`} view={view} desk={desk} stream={stream} row={ref} />
+    return (
+      <ValueCard
+        key={`${place.row}~${place.column}`}
+        view={view}
+        desk={desk}
+        stream={stream}
+        row={ref}
+        reasons={reasons}
+      />
+    )
   if (stream) return <StreamCard key={stream.id} view={view} desk={desk} stream={stream} />
   const component =
     ref.kind === 'value' && ref.componentId !== null && (place.column === NAME_COLUMN || place.column === UNIT_COLUMN)

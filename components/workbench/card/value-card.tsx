@@ -10,6 +10,7 @@ import { type BookView, rowUnit, titleOfRow } from '../book-view'
 import { keptWords, type Reading, readCell, shownNumber } from '../cell-reading'
 import { CommitInput } from '../commit-input'
 import type { Desk } from '../desk'
+import type { Reasons } from '../reasons/reasons'
 import { type RowPlace, rowIdOf } from '../rows'
 import { readTyped } from '../table-edits'
 import { sentence } from '../words'
@@ -21,16 +22,18 @@ import { GivenDetails } from './given-details'
 import { NotUsed } from './not-used'
 import { otherUnits } from './other-units'
 import { ReadingsList } from './readings-list'
+import { Why } from './why'
 
 type ValueCardProps = {
   view: BookView
   desk: Desk
   stream: RecordOf<'stream'>
   row: RowPlace
+  reasons?: Reasons | undefined
 }
 
 /** One cell of the stream table: its value in several units, its state, what was typed and where that comes from. */
-export function ValueCard({ view, desk, stream, row }: ValueCardProps) {
+export function ValueCard({ view, desk, stream, row, reasons }: ValueCardProps) {
   const { componentId } = row
   const reading = readCell(view, stream.id, row)
   const { shown } = rowUnit(view, row)
@@ -54,6 +57,7 @@ export function ValueCard({ view, desk, stream, row }: ValueCardProps) {
       <ConflictList view={view} desk={desk} stream={stream} row={row} />
       <FractionNote view={view} desk={desk} stream={stream} row={row} reading={reading} />
       <NotUsed view={view} desk={desk} row={row} reading={reading} />
+      {reasons ? <Why view={view} desk={desk} stream={stream} reading={reading} reasons={reasons} /> : null}
       {view.mayEdit && reading.state !== 'absent' ? (
         <CardSection title="Value">
           <CommitInput

@@ -31,6 +31,7 @@ export default async function BookPage({ params }: PageProps<'/[team]/books/[boo
         crumb={{ label: book.project.name, href: `/${slug}/books` }}
         readOnly={readOnly}
         decimal={book.settings.decimal}
+        closureLimit={book.settings.closureLimit}
         digits={{ flow: book.settings.flowDigits, fraction: book.settings.fractionDigits }}
       />
     </main>
