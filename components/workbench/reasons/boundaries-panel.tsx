@@ -9,6 +9,7 @@ import { ChooseUnits } from './choose-units'
 import { type MarkedBoundary, sameBoundary } from './explained'
 import type { ExplainedHandle } from './use-explained'
 import { Waiting } from './waiting'
+import { WideTable } from './wide-table'
 
 type BoundariesPanelProps = {
   view: BookView
@@ -52,7 +53,7 @@ export function BoundariesPanel({ view, handle, marked, onMark }: BoundariesPane
         Counted as typed, before anything is worked out. Degrees of freedom are unknowns less balances, sums and rules.
         Choosing a row marks the streams that cross it in the table and in the connections.
       </p>
-      <div className="overflow-x-auto" role="region" aria-label="Boundaries, table" tabIndex={-1}>
+      <WideTable label="Boundaries, table">
         <table className="w-full min-w-[760px] text-sm" aria-label="Boundaries">
           <thead>
             <tr className="border-b border-hair-2 text-2xs text-ink-2">
@@ -79,7 +80,7 @@ export function BoundariesPanel({ view, handle, marked, onMark }: BoundariesPane
             />
           ))}
         </table>
-      </div>
+      </WideTable>
       <ChooseUnits
         view={view}
         onCounted={(boundary) => {

@@ -6,6 +6,7 @@ import { toProblem } from '@/lib/book/to-problem'
 import { plainNumber } from '@/lib/sheet/format'
 import type { BookView } from '../book-view'
 import { type ClosureRow, closureByUnit, closureRows } from './closure-lines'
+import { WideTable } from './wide-table'
 
 type ClosurePanelProps = {
   view: BookView
@@ -42,7 +43,7 @@ export function ClosurePanel({ view, limit }: ClosurePanelProps) {
           the same as correct.
         </span>
       </p>
-      <div className="overflow-x-auto" role="region" aria-label="Closure by unit, table" tabIndex={-1}>
+      <WideTable label="Closure by unit, table">
         <table className="w-full min-w-[560px] text-sm" aria-label="Closure by unit">
           <thead>
             <tr className="border-b border-hair-2 text-2xs text-ink-2">
@@ -94,7 +95,7 @@ export function ClosurePanel({ view, limit }: ClosurePanelProps) {
             ))}
           </tbody>
         </table>
-      </div>
+      </WideTable>
       {shown ? (
         <Lines
           title={shown.title}
@@ -121,7 +122,7 @@ function Lines({ title, rows, over }: { title: string; rows: readonly ClosureRow
   const [hasMade, hasHeld] = [rows.some(({ made }) => made !== ''), rows.some(({ held }) => held !== '')]
   const name = title === 'Whole process' ? 'the whole process' : title
   return (
-    <div className="overflow-x-auto" role="region" aria-label={`Closure round ${name}, table`} tabIndex={-1}>
+    <WideTable label={`Closure round ${name}, table`}>
       <table className="w-full min-w-[480px] text-sm" aria-label={`Closure round ${name}`}>
         <caption className="pb-1 text-start font-semibold">Round {name}, by component and element</caption>
         <thead>
@@ -173,6 +174,6 @@ function Lines({ title, rows, over }: { title: string; rows: readonly ClosureRow
           ))}
         </tbody>
       </table>
-    </div>
+    </WideTable>
   )
 }

@@ -52,10 +52,11 @@ export function stepEquations(view: BookView, explained: Explained, step: Step):
         break
       }
       case 'given':
-        lean(terms, use)
         if (countsApart(use)) put(`given ${lines.length}`, 'typed', typedTerm(view, explained, use))
     }
   }
+  // After the equations: most typed values already stand in them by their numbers.
+  for (const use of step.uses) if (use.equation === 'given') lean(terms, use)
   const leansOn = [...terms.leansOn.values()].sort((a, b) => a.step - b.step)
   return { lines, leansOn }
 }
@@ -167,7 +168,8 @@ function sum(terms: StepTerms, { stream, quantity }: Use): Term | null {
   const there = terms.present(index)
   const parts = there.filter((c) => terms.known(index, family.componentFlow, c) !== undefined)
   const shares = there.filter((c) => terms.known(index, family.fraction, c) !== undefined)
-  if (parts.length < shares.length && shares.length >= there.length - 1)
+  const isOnlyShares = parts.length < shares.length && shares.length >= there.length - 1
+  if (there.length === 1 || isOnlyShares)
     return equal(added(there.map((c) => terms.share(index, c, family))), { symbols: '1', numbers: '1' })
   return equal(terms.total(index, family), added(there.flatMap((c) => terms.part(index, c, family) ?? [])))
 }

@@ -26,8 +26,8 @@ export function StepSheet({ view, explained, step, desk }: StepSheetProps) {
 /** Equations in symbols and, under them, with the numbers that were known. */
 export function EquationTable({ lines, label }: { lines: readonly EquationLine[]; label: string }) {
   return (
-    <div className="mt-1.5 overflow-x-auto" role="region" aria-label={label} tabIndex={-1}>
-      <table className="w-full text-sm">
+    <div className="mt-1.5">
+      <table className="w-full text-sm" aria-label={label}>
         <thead className="sr-only">
           <tr>
             <th scope="col">Equation</th>
@@ -39,11 +39,11 @@ export function EquationTable({ lines, label }: { lines: readonly EquationLine[]
             <tr key={key} className="break-inside-avoid border-t border-hair align-top">
               <th
                 scope="row"
-                className="w-36 py-1 pe-3 text-start font-normal whitespace-nowrap text-ink-2 max-sm:w-24"
+                className="w-36 py-1 pe-3 text-start font-normal text-ink-2 max-sm:w-24 sm:whitespace-nowrap"
               >
                 {name}
               </th>
-              <td className="py-1 font-mono tracking-tight">
+              <td className="py-1 font-mono tracking-tight [overflow-wrap:anywhere]">
                 {symbols === numbers ? null : <span className="block text-2xs text-ink-2">{symbols}</span>}
                 <span>{numbers}</span>
               </td>
@@ -90,8 +90,8 @@ export function CellLink({ desk, place, name }: { desk: Desk | null; place: Lean
 
 function FindTable({ view, explained, step, desk }: StepSheetProps) {
   return (
-    <div className="mt-2 overflow-x-auto" role="region" aria-label={`Results of step ${step.step}`} tabIndex={-1}>
-      <table className="text-sm">
+    <div className="mt-2">
+      <table className="text-sm" aria-label={`Results of step ${step.step}`}>
         <thead className="sr-only">
           <tr>
             <th scope="col">Stream</th>
@@ -105,7 +105,7 @@ function FindTable({ view, explained, step, desk }: StepSheetProps) {
               <th scope="row" className="py-0.5 pe-3 text-start font-semibold">
                 {where}
               </th>
-              <td className="py-0.5 pe-3 whitespace-nowrap text-ink-2">
+              <td className="py-0.5 pe-3 text-ink-2 sm:whitespace-nowrap">
                 {what}
                 {unit ? `, ${unit}` : ''}
               </td>

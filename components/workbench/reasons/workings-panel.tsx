@@ -40,7 +40,9 @@ export function WorkingsPanel({ view, desk, handle, at, onWalk }: WorkingsPanelP
               Work through it
             </Button>
             <span className="text-sm text-ink-2">
-              {steps.length === 1 ? '1 step' : `${steps.length} steps`}, the smallest boundary first.
+              {steps.length === 1 ? '1 step' : `${steps.length} steps`}, the smallest boundary first. In the equations
+              F(s) is the total flow of stream s, A(s) the flow of A in it and x A(s) its fraction of 1; a component
+              flow is fraction times total.
             </span>
             <span className="flex-1" />
             <Button size="small" look="quiet" onClick={() => window.print()}>

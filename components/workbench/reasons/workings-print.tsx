@@ -30,8 +30,8 @@ export function WorkingsPrint({ view, explained }: { view: BookView; explained: 
         <tfoot>
           <tr>
             <td>
-              Flows in {view.book.flowUnit}; fractions x of 1 in equations. F(s) is the total flow of stream s, A(s) the
-              flow of component A in it.
+              Flows in {view.book.flowUnit}. F(s) is the total flow of stream s, A(s) the flow of A in it and x A(s) its
+              fraction of 1; a component flow is fraction times total.
             </td>
           </tr>
         </tfoot>

@@ -128,7 +128,7 @@ describe('the workings of plants that react', () => {
         expect(item.textContent).not.toMatch(/undefined|NaN|\?|null/)
         expect(
           within(item)
-            .getByRole('region', { name: /^Results of step/ })
+            .getByRole('table', { name: /^Results of step/ })
             .querySelectorAll('tr').length,
         ).toBeGreaterThan(1)
       }
