@@ -1,8 +1,8 @@
-import type { Model } from '../model'
+import { ColumnKind, type Model } from '../model'
 import type { Equation, Sloped } from './exact-equations'
 import { addGradient, type ExactSpace, gradientOf, movedBy, movingFlows } from './exact-space'
 import { leastSquares, offRows, onRows, type PivotedQr, pivotedQr } from './pivoted-qr'
-import { formAt, measureAt, type Reading } from './readings'
+import { measureAt, type Reading } from './readings'
 import { onFree, reduceTies, type Ties, wholeMove } from './tied'
 
 /** The least squares estimate: where it stands, and the readings' gradients there as factors over the free places. */
@@ -24,6 +24,14 @@ export type Estimate = {
 
 const MOST_STEPS = 80
 const MOST_BOUND_CHANGES = 60
+/** Weight of a step's own length beside the readings (Levenberg, Q. Appl. Math. 2, 1944): least that is felt, most, light. */
+const LEAST_DAMPING = 1e-9
+const MOST_DAMPING = 1e6
+const LIGHT_DAMPING = 1e-4
+/** A step that must be cut more than this is damped instead. */
+const LEAST_FACTOR = 0.2
+/** An equation that is not met yet cannot tell dependent from independent any better than it is met. */
+const DOUBT = 0.1
 /** A place that weighs less than this part of itself in the readings is not seen by them. */
 const SEEN = 1e-10
 /** A flow below 0 by less than this part of the usual flow is rounding. */
@@ -44,19 +52,31 @@ export function estimate(
   start: Float64Array,
 ): Estimate {
   const flows = movingFlows(model, space)
+  const totals = flows.filter((j) => model.columnKind[j] !== ColumnKind.componentFlow)
   const usual = usualSize(start)
   let x = start
   let held: number[] = []
   let converged = false
   let iterations = 0
   const scale = scaleOf(space, start, usual)
-  while (iterations < MOST_STEPS && !converged) {
+  let bounded = false
+  let damping = equations.length > 0 ? LEAST_DAMPING : 0
+  while (iterations < MOST_STEPS) {
     iterations++
     const at = linearise(space, readings, equations, x)
-    const { step, held: now } = boundedStep(space, at, x, flows, held, scale, usual)
+    let factor = 0
+    let gain = 0
+    let step: Float64Array = new Float64Array(space.n)
+    let now = held
+    for (; ; damping = Math.max(10 * damping, LEAST_DAMPING)) {
+      const tried = boundedStep(space, at, x, bounded ? flows : [], held, scale, usual, damping)
+      step = tried.step
+      now = tried.held
+      ;({ factor, gain } = stepFactor(space, readings, equations, x, step, at, totals, bounded ? flows : []))
+      if (factor >= LEAST_FACTOR || damping >= MOST_DAMPING) break
+    }
     const same = now.length === held.length && now.every((j) => held.includes(j))
     held = now
-    const factor = stepFactor(space, readings, equations, x, step)
     const next = movedBy(space, x, step, factor)
     let change = 0
     for (let j = 0; j < x.length; j++)
@@ -66,8 +86,21 @@ export function estimate(
       )
     x = next
     for (const j of held) if (factor === 1) x[j] = 0
-    converged = (change < 1e-10 && same) || readings.length === 0
-    if (factor < 1e-6) break
+    const isLight = damping <= LIGHT_DAMPING
+    if (factor === 1) damping = damping <= 10 * LEAST_DAMPING ? 0 : damping / 10
+    const settled = ((change < 1e-10 || gain <= 1e-13) && same && isLight) || readings.length === 0
+    if (settled || factor < 1e-6) {
+      if (bounded) {
+        converged = settled
+        break
+      }
+      // Only an estimate that has settled tells which flows the readings would make negative.
+      bounded = true
+      if (!settled) {
+        x = start
+        damping = 1
+      }
+    }
   }
   const at = linearise(space, readings, equations, x)
   const open = at.equations.some(({ value, size }) => Math.abs(value) > 1e-8 * size)
@@ -143,7 +176,10 @@ function boundedStep(
   before: readonly number[],
   scale: Float64Array,
   usual: number,
+  damping: number,
 ): { step: Float64Array; held: number[] } {
+  const missed = equations.reduce((most, { value, size }) => Math.max(most, size > 0 ? Math.abs(value) / size : 0), 0)
+  const tolerance = Math.min(Math.max(DOUBT * missed, 1e-9), 1e-3)
   const held = [...before]
   const gradientOfFlow = (j: number): Float64Array => {
     const g = new Float64Array(space.n)
@@ -158,11 +194,14 @@ function boundedStep(
       rhs,
       space.n,
       scale,
+      tolerance,
     )
     const closing = wholeMove(ties, new Float64Array(ties.free.length), true)
     const b = Float64Array.from(residual, (r, i) => r - dot(gradients[i] as Float64Array, closing))
     const qr = factorsOf(gradients, ties, scale, residual.length)
-    const move = leastSquares(qr, b).map((value, k) => value * (scale[ties.free[k] as number] as number))
+    const move = (damping > 0 ? dampedMove(gradients, ties, scale, b, closing, damping) : leastSquares(qr, b)).map(
+      (value, k) => value * (scale[ties.free[k] as number] as number),
+    )
     const step = wholeMove(ties, move, true)
     if (change >= MOST_BOUND_CHANGES) return { step, held }
     const next = movedBy(space, x, step)
@@ -183,6 +222,37 @@ function boundedStep(
     if (drop < 0) return { step, held }
     held.splice(drop, 1)
   }
+}
+
+/** The move of the free places that answers the readings and keeps the whole step short, in the places' scales. */
+function dampedMove(
+  gradients: readonly Float64Array[],
+  ties: Ties,
+  scale: Float64Array,
+  b: Float64Array,
+  closing: Float64Array,
+  damping: number,
+): Float64Array {
+  const weight = Math.sqrt(damping)
+  const m = b.length + closing.length
+  const rows = gradients.map((g) => onFree(ties, g))
+  const place = new Map(ties.tied.map((q, t) => [q, t]))
+  const columns = ties.free.map((q, k) => {
+    const column = new Float64Array(m)
+    const own = scale[q] as number
+    for (let i = 0; i < b.length; i++) column[i] = ((rows[i] as Float64Array)[k] as number) * own
+    column[b.length + q] = weight
+    for (const [tied, t] of place)
+      column[b.length + tied] =
+        (-weight * ((ties.matrix[t] as Float64Array)[k] as number) * own) / (scale[tied] as number)
+    return column
+  })
+  const rhs = new Float64Array(m)
+  rhs.set(b)
+  closing.forEach((value, q) => {
+    rhs[b.length + q] = (-weight * value) / (scale[q] as number)
+  })
+  return leastSquares(pivotedQr(columns, m, SEEN), rhs)
 }
 
 /** The held flow that the readings push most to above 0, by the sign of its multiplier; -1 where none is. */
@@ -221,37 +291,50 @@ function wrongSide(
   return drop
 }
 
-/** The largest of 1, 1/2, 1/4 … that makes the sum of squares and the open equations smaller and empties no stream. */
+/**
+ * The largest of 1, 1/2, 1/4 … that makes the sum of squares with a price on what the equations miss smaller, and
+ * empties no stream that is read. The price is high enough that the whole step pays (Han, J. Optim. Theory Appl. 22, 1977).
+ */
 function stepFactor(
   space: ExactSpace,
   readings: readonly Reading[],
   equations: readonly Equation[],
   x: Float64Array,
   step: Float64Array,
-): number {
-  const merit = (at: Float64Array, weight: number): number => {
+  { residual, gradients, equations: sloped }: Linearised,
+  totals: readonly number[],
+  bounded: readonly number[],
+): { factor: number; gain: number } {
+  const squares = (at: Float64Array): number => {
     let sum = 0
     for (const { measure, value, sigma } of readings) sum += ((value - measureAt(measure, at)) / sigma) ** 2
-    for (const equation of equations) {
-      const { value, size } = equation(at)
-      sum += size > 0 ? (weight * Math.abs(value)) / size : 0
-    }
+    return sum
+  }
+  // What an equation misses is held against its terms at the point that the step starts from.
+  const size = usualSize(x)
+  const missed = (at: Float64Array): number => {
+    let sum = 0
+    equations.forEach((equation, k) => {
+      sum += Math.abs(equation(at).value) / ((sloped[k] as Sloped).size || 1)
+    })
+    for (const j of bounded) sum += Math.max(-(at[j] as number), 0) / size
     return sum
   }
   const keepsFlow = (at: Float64Array): boolean =>
-    readings.every(({ measure: { denominator } }) => {
-      if (!denominator) return true
-      const before = formAt(denominator, x)
-      return before <= 0 || formAt(denominator, at) > 0.05 * before
-    })
-  const sumOfSquares = merit(x, 0)
-  const weight = 10 * (sumOfSquares + readings.length)
-  const now = merit(x, weight)
+    totals.every((j) => (x[j] as number) <= 0 || (at[j] as number) > 0.05 * (x[j] as number))
+  const now = squares(x)
+  const open = missed(x)
+  const promised = residual.reduce((sum, r, i) => sum + (r - dot(gradients[i] as Float64Array, step)) ** 2, 0)
+  const price = open > 0 ? (2 * Math.max(promised - now, 0)) / open + now + 1 : 0
+  const gain = now - promised + price * open
+  const relative = (now - promised) / (now + 1) + open
   for (let factor = 1; factor > 1e-7; factor /= 2) {
     const at = movedBy(space, x, step, factor)
-    if (keepsFlow(at) && merit(at, weight) <= now * (1 + 1e-9) + 1e-18) return factor
+    if (!keepsFlow(at)) continue
+    const after = squares(at) + price * missed(at)
+    if (after <= now + price * open - 1e-4 * factor * gain + 1e-12 * (now + 1)) return { factor, gain: relative }
   }
-  return 1e-7
+  return { factor: 1e-7, gain: relative }
 }
 
 function dot(a: Float64Array, b: Float64Array): number {

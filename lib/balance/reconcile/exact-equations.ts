@@ -1,6 +1,7 @@
 import type { FormulaNode } from '../formula/parse-formula'
 import { columnForm, constantForm, type LinearForm, otherShare, otherSum, part, share, total } from '../measure/measure'
 import type { Model } from '../model'
+import type { Composition } from '../pending/composition'
 import type { Pending } from '../pending/pending'
 import { poolPart, poolTotal } from '../pending/pool'
 import { formAt } from './readings'
@@ -11,30 +12,43 @@ export type Sloped = { value: number; size: number; slope: LinearForm[]; factors
 /** An exact row that is not linear: 0 where it holds. */
 export type Equation = (x: Float64Array) => Sloped
 
-/** Exact rules that could not be turned linear, as equations in the columns. */
-export const equationsOf = (model: Model, left: readonly Pending[]): Equation[] =>
-  left.flatMap((item) => equationsOfOne(model, item))
+/** Equations, and unknowns of their own beyond the model's columns: how much of another stream's flows a stream has. */
+export type Equations = {
+  list: Equation[]
+  /** For each further unknown the two totals whose ratio it is. */
+  ratios: { of: LinearForm; to: LinearForm }[]
+}
 
-function equationsOfOne(model: Model, item: Pending): Equation[] {
-  switch (item.kind) {
-    case 'composition': {
-      const { streams, components } = item.composition
-      const [first, ...rest] = streams as [number, ...number[]]
-      // One component of each follows from the others.
-      return rest.flatMap((s) =>
-        components.slice(1).map((c) => (x: Float64Array) => {
-          const left_ = times(linear(poolPart(model, [s], c), x), linear(poolTotal(model, [first]), x))
-          return minus(left_, times(linear(poolPart(model, [first], c), x), linear(poolTotal(model, [s]), x)))
-        }),
-      )
-    }
-    case 'scaled': {
+/**
+ * Exact rules that could not be turned linear, as equations in the columns. Streams of one composition are multiples
+ * of one of them (of a splitter's inlets), each multiple a further unknown: so written, the equations keep their rank
+ * however the streams come to be known.
+ */
+export function equationsOf(model: Model, left: readonly Pending[]): Equations {
+  const equations: Equations = { list: [], ratios: [] }
+  for (const item of left) {
+    if (item.kind === 'composition') pushComposition(model, item.composition, equations)
+    else if (item.kind === 'formula')
+      equations.list.push((x) => minus(node(model, item.left, x), node(model, item.right, x)))
+    else {
       const { numerator, denominator = constantForm(1) } = item.measure
       const parameter = columnForm(item.parameter)
-      return [(x) => minus(linear(numerator, x), times(linear(parameter, x), linear(denominator, x)))]
+      equations.list.push((x) => minus(linear(numerator, x), times(linear(parameter, x), linear(denominator, x))))
     }
-    case 'formula':
-      return [(x) => minus(node(model, item.left, x), node(model, item.right, x))]
+  }
+  return equations
+}
+
+function pushComposition(model: Model, { streams, components, mixed }: Composition, { list, ratios }: Equations): void {
+  const whole = mixed.length > 0 ? mixed : [streams[0] as number]
+  // Of a splitter the last outlet follows from its balances.
+  for (const s of mixed.length > 0 ? streams.slice(0, -1) : streams.slice(1)) {
+    const ratio = columnForm(model.nColumns + ratios.length)
+    ratios.push({ of: poolTotal(model, [s]), to: poolTotal(model, whole) })
+    for (const c of components)
+      list.push((x) =>
+        minus(linear(poolPart(model, [s], c), x), times(linear(ratio, x), linear(poolPart(model, whole, c), x))),
+      )
   }
 }
 

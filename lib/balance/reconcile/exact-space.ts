@@ -16,8 +16,11 @@ export type ExactSpace = {
   factor: Float64Array
 }
 
-/** The space of points that what is known exactly leaves open. Cost: one back-substitution a free column. */
-export function exactSpace({ elimination: e, particular }: Knowledge): ExactSpace {
+/**
+ * The space of points that what is known exactly leaves open, with `more` further unknowns, each free. Cost: one
+ * back-substitution a free column.
+ */
+export function exactSpace({ elimination: e, particular }: Knowledge, more: number): ExactSpace {
   const { nColumns } = e.rows
   const entries: { direction: number; factor: number }[][] = Array.from({ length: nColumns }, () => [])
   e.free.forEach((column, q) => {
@@ -25,14 +28,15 @@ export function exactSpace({ elimination: e, particular }: Knowledge): ExactSpac
     for (let j = 0; j < nColumns; j++)
       if (along[j] !== 0) entries[j]?.push({ direction: q, factor: along[j] as number })
   })
-  const start = new Int32Array(nColumns + 1)
+  for (let k = 0; k < more; k++) entries.push([{ direction: e.free.length + k, factor: 1 }])
+  const start = new Int32Array(nColumns + more + 1)
   entries.forEach((list, j) => {
     start[j + 1] = (start[j] as number) + list.length
   })
   const flat = entries.flat()
   return {
-    n: e.free.length,
-    point: Float64Array.from(particular.value),
+    n: e.free.length + more,
+    point: Float64Array.from([...particular.value, ...new Float64Array(more)]),
     start,
     direction: Int32Array.from(flat, ({ direction }) => direction),
     factor: Float64Array.from(flat, ({ factor }) => factor),
@@ -77,9 +81,13 @@ export function movingFlows(model: Model, space: ExactSpace): number[] {
   const columns: number[] = []
   for (let j = 0; j < model.nColumns; j++)
     if (
-      (model.columnKind[j] as number) <= ColumnKind.total &&
+      (model.columnKind[j] as number) <= ColumnKind.otherTotal &&
       (space.start[j + 1] as number) > (space.start[j] as number)
     )
       columns.push(j)
   return columns
 }
+
+/** True where every point of the space gives the form 0. */
+export const isAlwaysZero = (space: ExactSpace, form: LinearForm): boolean =>
+  form.constant === 0 && form.columns.every((j) => space.point[j] === 0 && space.start[j] === space.start[j + 1])

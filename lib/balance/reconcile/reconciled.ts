@@ -6,8 +6,8 @@ import type { Conflict } from '../solution'
 import type { Knowledge } from '../states/knowledge'
 import { type Estimate, estimate } from './estimate'
 import { type Equation, equationsOf } from './exact-equations'
-import { type ExactSpace, exactSpace } from './exact-space'
-import { measureAt, type Reading, readingsOf, withoutReadings } from './readings'
+import { type ExactSpace, exactSpace, isAlwaysZero } from './exact-space'
+import { type Reading, readingsOf, withoutReadings } from './readings'
 import { startingPoint } from './starting-point'
 
 /** The estimate with all that it rests on, for questions put to it later. */
@@ -22,6 +22,12 @@ export type Reconciled = {
   knowledge: Knowledge
 }
 
+/** Further starts where exact rules are not linear: until one leads to an estimate, and a few to find a better one. */
+const MORE = 8
+const FEW = 3
+/** Sum of squares a reading up to which no other start is tried. */
+const PLEASED = 2
+
 /**
  * Makes the estimate: givens with a standard deviation are readings, all else holds exactly (Kuehn and Davidson, Chem.
  * Eng. Prog. 57, 1961). Undefined where the flow unit does not fit the basis. May throw only on a fault of its own.
@@ -31,18 +37,35 @@ export function estimateOf(problem: Problem): Reconciled | undefined {
   if (!model) return undefined
   const settled = settle(withoutReadings(model))
   const { knowledge, left } = settled.resolved
-  const space = exactSpace(knowledge)
-  const readings = readingsOf(model)
   const equations = equationsOf(model, left)
-  const start = startingPoint(model, space, readings)
+  const space = exactSpace(knowledge, equations.ratios.length)
+  const readings = readingsOf(model)
+  const start = startingPoint(model, space, readings, equations)
   // A share of a stream that is exactly empty says nothing.
-  const telling = readings.filter(({ measure }) => !Number.isNaN(measureAt(measure, start)))
+  const telling = readings.filter(({ measure: { denominator } }) => !denominator || !isAlwaysZero(space, denominator))
+  let best = estimate(model, space, telling, equations.list, start)
+  // Rules that are not linear may hold in several places: the readings choose, unless the first place pleases them.
+  const pleased = (its: Estimate): boolean => its.converged && its.objective <= PLEASED * (telling.length + 1)
+  for (
+    let attempt = 1;
+    !pleased(best) && attempt <= (best.converged ? FEW : MORE) && equations.list.length > 0;
+    attempt++
+  ) {
+    const other = estimate(
+      model,
+      space,
+      telling,
+      equations.list,
+      startingPoint(model, space, readings, equations, attempt),
+    )
+    if (other.converged && (!best.converged || other.objective < best.objective)) best = other
+  }
   return {
     model,
     space,
     readings: telling,
-    equations,
-    estimate: estimate(model, space, telling, equations, start),
+    equations: equations.list,
+    estimate: best,
     conflicts: describeConflicts(model, settled),
     knowledge,
   }

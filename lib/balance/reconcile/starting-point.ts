@@ -1,19 +1,81 @@
-import { combine, type LinearForm } from '../measure/measure'
+import { combine, constantForm, type LinearForm } from '../measure/measure'
 import { ColumnKind, type Model, otherPerOwn } from '../model'
+import { seededRandom } from '../random'
+import type { Equations, Sloped } from './exact-equations'
 import { addGradient, type ExactSpace, movedBy } from './exact-space'
 import { formAt, type Reading } from './readings'
 
 /** How far, relative to its size, an unknown may lie from a plain guess before the guess is felt. */
 const LOOSE = 3
+/** Held nearer than this, a guess would drown the readings' digits. */
+const TIGHTEST = 1e-3
+/** An unknown that comes out negative is held nearer to its guess, at most so often. */
+const ROUNDS = 8
 /** A trace component is guessed no smaller than this part of its stream. */
 const TRACE = 1e-3
 
 /**
  * A point that keeps the linear exact rows, near the readings where there are any and else near a plain guess (usual
- * flow, even composition), so that the first step of the estimate meets no empty stream. Array length nColumns.
+ * flow, even composition), so that the first step of the estimate meets no empty stream. Later attempts (1, 2 …) start
+ * elsewhere, reproducibly. Array length nColumns.
  */
-export function startingPoint(model: Model, space: ExactSpace, readings: readonly Reading[]): Float64Array {
-  const guess = plainGuess(model, readings)
+export function startingPoint(
+  model: Model,
+  space: ExactSpace,
+  readings: readonly Reading[],
+  { list: equations, ratios }: Equations,
+  attempt = 0,
+): Float64Array {
+  const guess = plainGuess(model, readings, ratios)
+  if (attempt > 1) shake(guess, seededRandom(attempt))
+  const looseness = new Float64Array(model.nColumns).fill(LOOSE)
+  let x = near(space, readings, guess, looseness, [])
+  const rounds = equations.length > 0 ? 3 * ROUNDS : ROUNDS
+  for (let round = 0; round < rounds; round++) {
+    let tightened = false
+    for (let j = 0; j < model.nColumns; j++) {
+      const isFlow = (model.columnKind[j] as number) <= ColumnKind.otherTotal
+      const moves = space.start[j] !== space.start[j + 1]
+      if (!isFlow || !moves || (x[j] as number) > 0.02 * (guess.size[j] as number)) continue
+      if ((looseness[j] as number) < TIGHTEST) continue
+      looseness[j]! /= 4
+      tightened = true
+    }
+    const softness = Math.max(0.3 / 2 ** round, 1e-3)
+    const soft = (attempt === 1 ? [] : equations).map((equation) => softened(equation(x), x, softness))
+    if (!tightened && soft.every(({ isMet }) => isMet)) break
+    x = near(space, readings, guess, looseness, soft)
+  }
+  return x
+}
+
+/** Guesses changed by up to a factor of 3 either way. */
+function shake({ value, size }: { value: Float64Array; size: Float64Array }, random: () => number): void {
+  value.forEach((own, j) => {
+    const factor = 3 ** (2 * random() - 1)
+    value[j] = own * factor
+    size[j] = (size[j] as number) * factor
+  })
+}
+
+/** An equation made linear at x, to be met to a part of its terms. */
+function softened({ value, size, slope, factors }: Sloped, x: Float64Array, softness: number) {
+  let form = constantForm(value)
+  slope.forEach((its, k) => {
+    const factor = factors[k] as number
+    form = combine(1, form, factor, { ...its, constant: its.constant - formAt(its, x) })
+  })
+  return { form, weight: 1 / (softness * (size || 1)), isMet: Math.abs(value) <= 1e-3 * size }
+}
+
+/** The point nearest to readings and guess, an unknown's distance from its guess counting over looseness x size. */
+function near(
+  space: ExactSpace,
+  readings: readonly Reading[],
+  guess: { value: Float64Array; size: Float64Array },
+  looseness: Float64Array,
+  soft: readonly { form: LinearForm; weight: number }[],
+): Float64Array {
   const { n } = space
   const normal = Array.from({ length: n }, () => new Float64Array(n))
   const rhs = new Float64Array(n)
@@ -30,13 +92,14 @@ export function startingPoint(model: Model, space: ExactSpace, readings: readonl
       rhs[p]! += (g[p] as number) * rest
     }
   }
-  for (let j = 0; j < model.nColumns; j++) {
+  for (let j = 0; j < guess.value.length; j++) {
     if (space.start[j] === space.start[j + 1]) continue
     pull(
       { columns: [j], coefficients: [1], constant: -(guess.value[j] as number) },
-      1 / (LOOSE * (guess.size[j] as number)),
+      1 / ((looseness[j] as number) * (guess.size[j] as number)),
     )
   }
+  for (const { form, weight } of soft) pull(form, weight)
   for (const { measure, value, sigma } of readings) {
     const { numerator, denominator } = measure
     if (!denominator) pull({ ...numerator, constant: numerator.constant - value }, 1 / sigma)
@@ -48,7 +111,11 @@ export function startingPoint(model: Model, space: ExactSpace, readings: readonl
   return movedBy(space, space.point, solvePositive(normal, rhs))
 }
 
-function plainGuess(model: Model, readings: readonly Reading[]): { value: Float64Array; size: Float64Array } {
+function plainGuess(
+  model: Model,
+  readings: readonly Reading[],
+  ratios: Equations['ratios'],
+): { value: Float64Array; size: Float64Array } {
   const { nStreams, nComponents, problem } = model
   const flows = new Map<number, number>()
   const fractions = new Map<number, number>()
@@ -95,7 +162,9 @@ function plainGuess(model: Model, readings: readonly Reading[]): { value: Float6
       value[j] = 0.5
       size[j] = 1
     }
-  return { value, size }
+  const ratioOf = ({ of, to }: Equations['ratios'][number]): number => formAt(of, value) / formAt(to, value) || 1
+  const guessed = ratios.map(ratioOf)
+  return { value: Float64Array.from([...value, ...guessed]), size: Float64Array.from([...size, ...guessed]) }
 }
 
 /** Solves a positive definite system by Cholesky's factors, overwriting them; a place that has lost all digits stays 0. */

@@ -12,10 +12,17 @@ export type Ties = {
   leftOver: number
 }
 
+/** A row that is left below this part of its terms follows from the others. */
 const INDEPENDENT = 1e-9
 
 /** Reduces rows g . d = rhs (each g of length n, overwritten) by elimination with full pivoting, rows scaled alike. */
-export function reduceTies(rows: Float64Array[], rhs: number[], n: number, scale: Float64Array): Ties {
+export function reduceTies(
+  rows: Float64Array[],
+  rhs: number[],
+  n: number,
+  scale: Float64Array,
+  independent = INDEPENDENT,
+): Ties {
   const b = [...rhs]
   const sizes = rows.map((row, i) => {
     let largest = 0
@@ -32,7 +39,7 @@ export function reduceTies(rows: Float64Array[], rhs: number[], n: number, scale
   const taken = new Uint8Array(n)
   for (;;) {
     let best: [number, number] | undefined
-    let size = INDEPENDENT
+    let size = independent
     for (const i of waiting) {
       const row = rows[i] as Float64Array
       for (let q = 0; q < n; q++) {
