@@ -8,6 +8,7 @@ import type { Resolved } from '../states/resolved'
 import { type Agreement, agree } from './agreement'
 import { type Circuit, ROUNDING, tension } from './circuit'
 import { type ForcedZero, findForcedZero } from './forced-zero'
+import { secondOpinion } from './second-opinion'
 import { cancelsAt, traceCircuits } from './trace-circuits'
 
 /** Above 1 by less than this, half-widths still just reach. */
@@ -39,6 +40,17 @@ export type Compromise = {
  * at the end of that, since at a bad first point the flows that the half-widths are weighed by may be far off.
  */
 export function findCompromise(model: Model, leaveOut: ReadonlySet<Member>): Compromise {
+  const found = stepwiseCompromise(model, leaveOut)
+  if (found.clashes.length === 0 && !found.zero) return found
+  // Steps from circuit to circuit can go astray where rounding hides what depends on what: all at once decides.
+  const adjusted = secondOpinion(model, leaveOut, found.resolved.knowledge.generic.value)
+  if (!adjusted) return found
+  const assembly = assemble(model, { leaveOut, adjusted })
+  const resolved = resolve(model, assembly)
+  return openRows(resolved.knowledge).length > 0 ? found : { assembly, resolved, adjusted, clashes: [] }
+}
+
+function stepwiseCompromise(model: Model, leaveOut: ReadonlySet<Member>): Compromise {
   const adjusted = new Map<Member, number>()
   const basis: ForcedZero[] = []
   let doubtful: Doubtful[] = []

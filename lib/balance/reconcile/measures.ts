@@ -1,14 +1,14 @@
+import { deviationOf, type Estimate } from '../estimate/estimate'
+import { addGradient, type ExactSpace, gradientOf } from '../estimate/exact-space'
+import { formAt, measureAt, type Reading } from '../estimate/readings'
+import { onFree } from '../estimate/tied'
 import type { Measure } from '../measure/measure'
 import { placeOf as placeOfGiven } from '../measure/measure-name'
 import type { Model } from '../model'
 import { type Place, slotOf } from '../solution'
 import { cellQuantityOf, forEachCell, quantityOfCell } from '../states/cells'
-import { deviationOf, type Estimate } from './estimate'
-import { addGradient, type ExactSpace, gradientOf } from './exact-space'
-import { formAt, measureAt, type Reading } from './readings'
 import type { MeasureClass, ReconciledMeasure } from './reconciliation'
 import type { ReadingTest } from './test-readings'
-import { onFree } from './tied'
 
 /** A gradient that cancels to this part of its terms does not move: the measure holds exactly. */
 const HOLDS = 1e-9

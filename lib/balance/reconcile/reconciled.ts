@@ -1,14 +1,14 @@
 import { describeConflicts } from '../conflicts/describe-conflicts'
 import { settle } from '../conflicts/find-conflicts'
+import { type Estimate, estimate } from '../estimate/estimate'
+import { type Equation, equationsOf } from '../estimate/exact-equations'
+import { type ExactSpace, exactSpace, isAlwaysZero } from '../estimate/exact-space'
+import { type Reading, readingsOf, withoutReadings } from '../estimate/readings'
+import { startingPoint } from '../estimate/starting-point'
 import { buildModel, type Model } from '../model'
 import type { Problem } from '../problem'
 import type { Conflict } from '../solution'
 import type { Knowledge } from '../states/knowledge'
-import { type Estimate, estimate } from './estimate'
-import { type Equation, equationsOf } from './exact-equations'
-import { type ExactSpace, exactSpace, isAlwaysZero } from './exact-space'
-import { type Reading, readingsOf, withoutReadings } from './readings'
-import { startingPoint } from './starting-point'
 
 /** The estimate with all that it rests on, for questions put to it later. */
 export type Reconciled = {

@@ -1,6 +1,6 @@
-import { deviationOf, type Estimate } from './estimate'
-import { type ExactSpace, gradientOf } from './exact-space'
-import type { Reading } from './readings'
+import { deviationOf, type Estimate } from '../estimate/estimate'
+import { type ExactSpace, gradientOf } from '../estimate/exact-space'
+import type { Reading } from '../estimate/readings'
 
 /** Below this part of its variance a reading keeps no room for an adjustment: nothing checks it. */
 const UNCHECKED = 1e-9

@@ -1,9 +1,9 @@
+import type { Reading } from '../estimate/readings'
 import { total } from '../measure/measure'
 import { unitFactor } from '../measure/typed-value'
 import type { Model, UnitModel } from '../model'
 import { isBalanced } from '../rows/balances'
 import { fixedValue, type Knowledge } from '../states/knowledge'
-import type { Reading } from './readings'
 import type { Reconciliation } from './reconciliation'
 
 /**
