@@ -47,7 +47,9 @@ export function findCompromise(model: Model, leaveOut: ReadonlySet<Member>): Com
   if (!adjusted) return found
   const assembly = assemble(model, { leaveOut, adjusted })
   const resolved = resolve(model, assembly)
-  return openRows(resolved.knowledge).length > 0 ? found : { assembly, resolved, adjusted, clashes: [] }
+  if (openRows(resolved.knowledge).length > 0) return found
+  if (findForcedZero(model, assembly, resolved, { leaveOut, adjusted, basis: [] })) return found
+  return { assembly, resolved, adjusted, clashes: [] }
 }
 
 function stepwiseCompromise(model: Model, leaveOut: ReadonlySet<Member>): Compromise {

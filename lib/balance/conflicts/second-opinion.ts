@@ -38,7 +38,7 @@ export function secondOpinion(
   near: Float64Array,
 ): Map<Member, number> | undefined {
   const opened = openedModel(model, leaveOut)
-  if (!opened) return undefined
+  if (!opened || opened.rounded.length === 0) return undefined
   const { free, rounded } = opened
   const assembly = assemble(free, { leaveOut })
   const resolved = resolve(free, assembly)
@@ -64,6 +64,7 @@ export function secondOpinion(
     if (!its.converged) return undefined
     const beyond = telling.map(({ measure, value, sigma }) => (value - measureAt(measure, its.x)) / sigma)
     const sizes = beyond.map(Math.abs)
+    if (sizes.some(Number.isNaN)) return undefined
     if (sizes.every((size) => size <= 1 + JUST))
       return new Map(telling.map(({ member, measure }) => [member, measureAt(measure, its.x)]))
     // At the optimum the weighted deviations balance, so their pull bounds the least greatest deviation from below.
