@@ -56,6 +56,7 @@ export function BenchBody(props: BenchBodyProps) {
   const cardIsOpen = !narrow || cardOpen
   const { reasons, panes, onKeyDownCapture } = useReasons({
     view,
+    tell: desk.tell,
     panes: { table: props.table, links: props.links, wave: props.wave },
     panel,
     onPanel: props.onPanel,

@@ -63,12 +63,21 @@ export function walkedState(explained: Explained, { row, column }: GridPlace, at
 }
 
 /** The stream table as it stands at a step: found before, solvable now by this step, the rest still unknown. */
-export function walkedTable(source: GridSource, explained: Explained, at: number): GridSource {
+export function walkedTable(
+  source: GridSource,
+  explained: Explained,
+  at: number,
+  tell: (sentence: string) => void,
+): GridSource {
+  const refuse = (): void => tell('You are walking through the workings: leave them (Esc) to edit.')
   const said = (label: string, words: string): string => label.replace(/solvable now/, words)
   return {
     ...source,
     mayEdit: () => false,
     isReadOnly: () => true,
+    clear: refuse,
+    paste: refuse,
+    shift: refuse,
     view: (place) => {
       const cell = source.view(place)
       if (cell.tone !== 'solvable') return cell

@@ -1,6 +1,7 @@
 import { type KeyboardEvent, useMemo, useState } from 'react'
 import type { GridSource } from '@/hooks/grid-model'
 import type { BookView } from '../book-view'
+import type { Desk } from '../desk'
 import type { PanelKey } from '../panel-tabs'
 import { type MarkedBoundary, placeOf } from './explained'
 import { cappedLinks, cappedTable, walkedTable } from './marked-sources'
@@ -12,6 +13,7 @@ type Panes = { table: GridSource; links: GridSource; wave: ReadonlyMap<string, n
 
 type ReasonsInput = {
   view: BookView
+  tell: Desk['tell']
   panes: Panes
   panel: PanelKey
   onPanel: (panel: PanelKey) => void
@@ -20,7 +22,7 @@ type ReasonsInput = {
 }
 
 /** Why the cells have their values, what is marked in the panes, and the walk through the workings. */
-export function useReasons({ view, panes, panel, onPanel, cardAsks }: ReasonsInput) {
+export function useReasons({ view, tell, panes, panel, onPanel, cardAsks }: ReasonsInput) {
   const [chosen, setChosen] = useState<MarkedBoundary | null>(null)
   const [position, setPosition] = useState<number | null>(null)
   const isWanted = cardAsks || position !== null || panel === 'boundaries' || panel === 'workings'
@@ -35,10 +37,10 @@ export function useReasons({ view, panes, panel, onPanel, cardAsks }: ReasonsInp
   )
   const { table, links, wave } = panes
   const shown = useMemo((): Panes => {
-    const walked = explained && at !== null ? walkedTable(table, explained, at) : table
+    const walked = explained && at !== null ? walkedTable(table, explained, at, tell) : table
     if (!marked) return { table: walked, links, wave }
     return { table: cappedTable(walked, view, marked), links: cappedLinks(links, view, marked), wave }
-  }, [table, links, wave, explained, at, marked, view])
+  }, [table, links, wave, explained, at, marked, view, tell])
   const ownWave = useMemo(() => {
     if (!step) return null
     const keys = step.finds.flatMap((find) => {
