@@ -29,6 +29,7 @@ export function MemberWays({ view, desk, member, onDone }: MemberWaysProps) {
     if (desk.tryRun(setUse(view.state, ref, to, newId))) onDone()
   }
   const given = ref.kind === 'given' ? view.state.given.get(ref.id) : undefined
+  const sigma = given?.sigma == null ? undefined : `± ${plainNumber(given.sigma, view.decimal)} …`
   return (
     <div className="grid gap-1.5">
       <div className="flex flex-wrap gap-1.5">
@@ -41,11 +42,11 @@ export function MemberWays({ view, desk, member, onDone }: MemberWaysProps) {
         {given ? (
           <Button
             size="small"
-            aria-label={`Give ${name} an uncertainty`}
+            aria-label={sigma ? `Change the uncertainty of ${name}, ${sigma}` : `Give ${name} an uncertainty`}
             aria-expanded={asking}
             onClick={() => setAsking(!asking)}
           >
-            {given.sigma === null ? 'Uncertainty…' : `± ${plainNumber(given.sigma, view.decimal)} …`}
+            {sigma ?? 'Uncertainty…'}
           </Button>
         ) : null}
       </div>
