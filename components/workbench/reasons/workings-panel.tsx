@@ -79,17 +79,23 @@ export function WorkingsPanel({ view, desk, handle, at, onWalk }: WorkingsPanelP
   )
 }
 
-/** Previous and next; Esc leaves, from anywhere in the workbench. */
+/** Previous and next; Esc leaves. At either end the button stays focusable, so that Esc still finds the workbench. */
 function Walk({ at, count, onWalk }: { at: number; count: number; onWalk: WorkingsPanelProps['onWalk'] }) {
   const next = useRef<HTMLButtonElement>(null)
   useEffect(() => next.current?.focus(), [])
   return (
     <fieldset className="flex flex-wrap items-center gap-2">
       <legend className="sr-only">Work through it</legend>
-      <Button size="small" disabled={at <= 1} onClick={() => onWalk(at - 1)}>
+      <Button size="small" aria-disabled={at <= 1} onClick={() => onWalk(Math.max(1, at - 1))}>
         <ChevronLeft className="size-3.5" aria-hidden="true" /> Previous step
       </Button>
-      <Button ref={next} size="small" look="main" disabled={at >= count} onClick={() => onWalk(at + 1)}>
+      <Button
+        ref={next}
+        size="small"
+        look="main"
+        aria-disabled={at >= count}
+        onClick={() => onWalk(Math.min(count, at + 1))}
+      >
         Next step <ChevronRight className="size-3.5" aria-hidden="true" />
       </Button>
       <span className="text-sm" role="status">
