@@ -1,4 +1,4 @@
-import { countBoundary, createSolver, explain, measureNext, type Solution } from '@/lib/balance'
+import { countBoundary, createSolver, explain, limitsOf, measureNext, type Solution, type SolveLp } from '@/lib/balance'
 import { cannotOf } from '@/lib/book/cannot-measure'
 import { apply } from '@/lib/book/change'
 import type { BookProblem } from '@/lib/book/problem-draft'
@@ -9,11 +9,19 @@ import type { Answer, FromPanels, PanelKind, Panels, ToPanels } from './panel-qu
 /** One operating case, solved here again rather than sent: copying an answer costs about as much, and it cannot be of another book. */
 type Worked = { state: BookState; caseId: string; book: BookProblem; solution: Solution }
 
-type Answerers = { [K in PanelKind]: (worked: Worked, question: Panels[K]['question']) => Panels[K]['answer'] }
+type Answerers = {
+  [K in PanelKind]: (
+    worked: Worked,
+    question: Panels[K]['question'],
+    solveLp: SolveLp | undefined,
+  ) => Panels[K]['answer']
+}
 
 const answerers: Answerers = {
   explain: ({ book, solution }, question) => explain(book.problem, solution, question),
   boundary: ({ book, solution }, { units }) => countBoundary(book.problem, solution, units) ?? null,
+  limits: ({ book, solution }, { place }, solveLp) =>
+    solveLp ? limitsOf(book.problem, solution, place, solveLp) : { found: false, why: 'failed' },
   next: ({ book, state }) => measureNext(book.problem, { cannot: cannotOf(state) }),
 }
 
@@ -23,8 +31,8 @@ export class PanelBook {
   private readonly solver = createSolver()
   private worked: Worked | null = null
 
-  /** Never throws: a bug in an answer is told, with what went wrong. */
-  answer({ sequence, caseId, book, asked }: ToPanels): FromPanels {
+  /** `solveLp` is what limits need. Never throws: a bug in an answer is told, with what went wrong. */
+  answer({ sequence, caseId, book, asked }: ToPanels, solveLp?: SolveLp): FromPanels {
     if (book?.type === 'load') this.state = stateOf(book.records)
     else if (book) {
       const applied = apply(this.state, { id: 'worker', label: 'worker', ...book.body })
@@ -32,8 +40,12 @@ export class PanelBook {
       this.state = applied.state
     }
     try {
-      const answerer = answerers[asked.kind] as (worked: Worked, question: unknown) => Answer<PanelKind>
-      return { type: 'answered', sequence, answer: answerer(this.solved(caseId), asked.question) }
+      const answerer = answerers[asked.kind] as (
+        worked: Worked,
+        question: unknown,
+        solveLp: SolveLp | undefined,
+      ) => Answer<PanelKind>
+      return { type: 'answered', sequence, answer: answerer(this.solved(caseId), asked.question, solveLp) }
     } catch (cause) {
       return { type: 'failed', sequence, what: cause instanceof Error ? cause.message : String(cause) }
     }

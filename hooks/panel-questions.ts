@@ -1,4 +1,4 @@
-import type { CountedBoundary, Explanation, MeasureNext } from '@/lib/balance'
+import type { CountedBoundary, Explanation, Limits, MeasureNext, Place } from '@/lib/balance'
 import type { Change } from '@/lib/book/change'
 import type { BookRecord } from '@/lib/book/kinds'
 
@@ -10,6 +10,8 @@ export type Panels = {
   boundary: { question: { units: readonly string[] }; answer: CountedBoundary | null }
   /** What to measure next, best first. */
   next: { question: Record<never, never>; answer: MeasureNext[] }
+  /** The least and greatest value that one unknown cell can have. */
+  limits: { question: { place: Place }; answer: Limits }
 }
 
 export type PanelKind = keyof Panels

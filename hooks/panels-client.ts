@@ -34,7 +34,7 @@ type Known = { key: string; book: Book; answer: Answer<PanelKind> | null; troubl
 const tooLong = `This took longer than ${BUDGET / 1000} seconds and was stopped. It is tried again after the next edit.`
 const waiting: PanelHandle = { answer: null, stale: true, trouble: null }
 /** What is under the cursor first, what takes longest last. */
-const order: readonly PanelKind[] = ['next', 'boundary', 'explain']
+const order: readonly PanelKind[] = ['limits', 'next', 'boundary', 'explain']
 
 /**
  * Keeps the second worker busy with what somebody looks at, about the newest book whose states are there. One question is

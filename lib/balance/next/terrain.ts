@@ -4,14 +4,12 @@ import type { Problem } from '../problem'
 import { findRoots } from '../roots/find-roots'
 import { linearisedAt } from '../roots/tangents'
 import type { Work } from '../roots/work'
-import { assemble } from '../rows/assemble'
-import { memberOfRule } from '../rows/members'
 import { CellState } from '../solution'
 import type { Vector } from '../sparse/solve'
 import { findAmplified } from '../states/amplification'
+import { streamsAtOdds } from '../states/at-odds-blocks'
 import { forEachCell, type KeptCell, keepCell } from '../states/cells'
 import { fillCells } from '../states/fill-cells'
-import { blocksOf } from '../states/free-scale'
 import type { Knowledge } from '../states/knowledge'
 import { countCells } from '../states/summary'
 import { randomPoint } from './random-point'
@@ -61,25 +59,4 @@ export function standIn({ model, settled }: Terrain, seed: number, work: Work): 
       : undefined
   const { knowledge } = near?.resolved ?? resolved
   return { point: point ?? knowledge.generic, knowledge, isSolution: point !== undefined }
-}
-
-/** Streams joined by rows to anything that is at odds: from such a block nothing is claimed. */
-function streamsAtOdds(model: Model, { atOdds }: Settled): (stream: number) => boolean {
-  if (atOdds.size === 0) return () => false
-  const assembly = assemble(model)
-  const find = blocksOf(model, assembly)
-  const blocks = new Set<number>()
-  for (const { index, stream } of assembly.givens)
-    if (atOdds.has(index)) blocks.add(find(model.totalColumn[stream] as number))
-  const { rows } = assembly
-  rows.source.forEach((number, i) => {
-    const source = rows.sources[number]
-    if (source?.type !== 'rule' || !atOdds.has(memberOfRule(model, source.index))) return
-    for (let k = rows.start[i] as number; k < (rows.start[i + 1] as number); k++)
-      blocks.add(find(rows.column[k] as number))
-  })
-  return (stream) => {
-    const column = model.totalColumn[stream] as number
-    return column >= 0 && blocks.has(find(column))
-  }
 }

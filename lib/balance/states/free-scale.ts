@@ -41,11 +41,12 @@ export function blocksOf(model: Model, { rows, pending }: Assembly): (column: nu
     for (const column of columns) parent[find(column)] = find(columns[0] as number)
   }
   for (let i = 0; i < rows.count; i++) join(rows.column.slice(rows.start[i], rows.start[i + 1]))
-  for (const item of pending) join(columnsOf(model, item))
+  for (const item of pending) join(columnsOfPending(model, item))
   return find
 }
 
-function columnsOf(model: Model, item: Pending): number[] {
+/** Columns that a rule still to turn into rows speaks of; -1 among them for a stream with nothing in it. */
+export function columnsOfPending(model: Model, item: Pending): number[] {
   if (item.kind === 'composition') return item.composition.streams.map((s) => model.totalColumn[s] as number)
   if (item.kind === 'scaled')
     return [...item.measure.numerator.columns, ...(item.measure.denominator?.columns ?? []), item.parameter]
