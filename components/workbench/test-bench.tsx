@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { render, screen } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
+import loadHighs from 'highs'
 import { useMemo } from 'react'
 import { vi } from 'vitest'
 import type { BookHandle } from '@/hooks/book-handle'
@@ -10,7 +11,7 @@ import type { PanelPort } from '@/hooks/panels-client'
 import { type SolverHandle, solvedCase } from '@/hooks/solver-handle'
 import { useLocalBook } from '@/hooks/use-local-book'
 import { usePanelsWorker } from '@/hooks/use-panels'
-import { type Problem, solve } from '@/lib/balance'
+import { type Problem, solve, solveLpBy } from '@/lib/balance'
 import { fromProblem } from '@/lib/book/from-problem'
 import type { BookRecord } from '@/lib/book/kinds'
 import { starters } from '@/lib/book/starters'
@@ -43,11 +44,13 @@ function useSolverHere(state: BookState, caseId: string): SolverHandle {
   }, [state, caseId])
 }
 
+const solveLp = solveLpBy(await loadHighs())
+
 /** The second worker, likewise. */
 function panelsHere(): PanelPort {
   const book = new PanelBook()
   const port: PanelPort = {
-    postMessage: (message) => port.onmessage?.({ data: book.answer(message) } as MessageEvent),
+    postMessage: (message) => port.onmessage?.({ data: book.answer(message, solveLp) } as MessageEvent),
     terminate: () => {},
     onmessage: null,
     onerror: null,

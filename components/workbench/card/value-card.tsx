@@ -19,6 +19,7 @@ import { CellNotes } from './cell-notes'
 import { ConflictList } from './conflict-list'
 import { FractionNote } from './fraction-note'
 import { GivenDetails } from './given-details'
+import { LimitsNote } from './limits-note'
 import { NotUsed } from './not-used'
 import { otherUnits } from './other-units'
 import { ReadingsList } from './readings-list'
@@ -58,6 +59,7 @@ export function ValueCard({ view, desk, stream, row, reasons }: ValueCardProps) 
       <FractionNote view={view} desk={desk} stream={stream} row={row} reading={reading} />
       <NotUsed view={view} desk={desk} row={row} reading={reading} />
       {reasons ? <Why view={view} desk={desk} stream={stream} reading={reading} reasons={reasons} /> : null}
+      {reading.state === 'unknown' ? <LimitsNote view={view} stream={stream} row={row} /> : null}
       {view.mayEdit && reading.state !== 'absent' ? (
         <CardSection title="Value">
           <CommitInput
