@@ -11,7 +11,8 @@ const book = new PanelBook()
 /** HiGHS is 3 MB: loaded from the application itself when limits are first asked for. */
 let highs: Promise<SolveLp> | undefined
 async function loadLp(): Promise<SolveLp> {
-  const wasm = new URL('highs/runtime', import.meta.url).href
+  // The bundler puts the file among the application's own and may give its path alone.
+  const wasm = new URL(new URL('highs/runtime', import.meta.url).href, self.location.origin).href
   return solveLpBy(await loadHighs({ locateFile: () => wasm }))
 }
 
