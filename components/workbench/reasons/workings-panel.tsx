@@ -63,7 +63,7 @@ export function WorkingsPanel({ view, desk, handle, at, onWalk }: WorkingsPanelP
                 <button
                   type="button"
                   className="link font-sans text-2xs font-normal"
-                  aria-label={`Show step ${step.step} in the table`}
+                  aria-label={`Show in the table: step ${step.step}`}
                   onClick={() => onWalk(step.step)}
                 >
                   Show in the table

@@ -90,7 +90,7 @@ describe('the workings of the salt plant', () => {
   it('are walked through: found before, solvable now, still unknown; the boundary is marked; Esc leaves', async () => {
     const { user, said, steps, cell } = await open()
     const at = steps().findIndex((title) => title.includes('Boundary round T-101')) + 1
-    await user.click(screen.getByRole('button', { name: `Show step ${at} in the table` }))
+    await user.click(screen.getByRole('button', { name: `Show in the table: step ${at}` }))
     expect(screen.getByText(`Step ${at} of ${steps().length > 1 ? steps().length : 12}`)).toBeInTheDocument()
     expect(plain(said('Total flow, stream 107'))).toBe('Total flow, stream 107: 10 939 kg/h, solvable now')
     expect(plain(said('Mass fraction of Water, stream 101'))).toMatch(/75\.00 wt %, known from an earlier step$/)
