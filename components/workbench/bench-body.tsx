@@ -17,7 +17,7 @@ import { NextPanel } from './next/next-panel'
 import { NotesPanel, noteLines } from './notes-panel'
 import { ChecksPanel } from './odds/checks-panel'
 import { OddsPanel } from './odds/odds-panel'
-import { Legend, type PanelKey, PanelTabs } from './panel-tabs'
+import { type PanelKey, PanelTabs } from './panel-tabs'
 import { BoundariesPanel } from './reasons/boundaries-panel'
 import { ClosurePanel } from './reasons/closure-panel'
 import { MarkNote } from './reasons/mark-note'
@@ -109,7 +109,6 @@ export function BenchBody(props: BenchBodyProps) {
                     }}
                     onChoose={props.onPanel}
                   >
-                    <Legend />
                     <MarkNote reasons={reasons} />
                     {view.mayEdit && panel === 'connections' ? (
                       <Button

@@ -92,7 +92,10 @@ const keys: [string, string][] = [
 /** What the fills and edges mean. */
 export function Legend() {
   return (
-    <ul className="flex items-center gap-3.5 text-2xs text-ink-2 max-lg:hidden" aria-label="States">
+    <ul
+      className="flex flex-none items-center gap-3.5 text-2xs whitespace-nowrap text-ink-2 max-lg:hidden"
+      aria-label="States"
+    >
       {keys.map(([className, word]) => (
         <li key={word} className="flex items-center gap-1.5">
           <span className={`cell-swatch ${className}`} aria-hidden="true" />

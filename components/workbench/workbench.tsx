@@ -19,7 +19,7 @@ import { type Desk, type DialogRequest, type Offer, runner } from './desk'
 import { BenchDialogs } from './dialogs/bench-dialogs'
 import { linksRows, linksSource } from './links-source'
 import { OfferNote } from './offer-note'
-import type { PanelKey } from './panel-tabs'
+import { Legend, type PanelKey } from './panel-tabs'
 import { PlaceMenu } from './place-menu'
 import { backToCell, goToNextRegion } from './regions'
 import { type SectionKey, sectionOf, valueRow } from './rows'
@@ -200,8 +200,9 @@ export function Workbench({ book, solver, caseId, crumb = null, kept = 'All chan
           onStream={(streamId) => desk.show('table', { row: 'tag', column: streamId })}
           closureLimit={props.closureLimit ?? 0.1}
         />
-        <footer>
+        <footer className="flex items-baseline justify-between gap-6">
           <Caution />
+          <Legend />
         </footer>
         {offer ? (
           <OfferNote

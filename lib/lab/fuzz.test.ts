@@ -113,7 +113,7 @@ describe('any text', () => {
           else expect(answer.reading.samples.length).toBeGreaterThan(0)
         },
       ),
-      { numRuns: 600 },
+      { numRuns: 300 },
     )
   })
 
@@ -129,7 +129,7 @@ describe('any text', () => {
             if (/^[<>~]? ?\d/.test(raw) && !/^\d+[./-]\d+[./-]\d+$/.test(raw))
               expect(everything, text).toContain(/[\d.,]+/.exec(raw)?.[0])
       }),
-      { numRuns: 800 },
+      { numRuns: 400 },
     )
   })
 })

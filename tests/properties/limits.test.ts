@@ -4,7 +4,7 @@ import { describe, expect, it } from 'vitest'
 import { CellState, limitsOf, type Place, slotOf, solve, solveLpBy } from '@/lib/balance'
 import { type RandomBookOptions, randomBook } from './random-book'
 
-const parameters = { numRuns: 60, verbose: 1, seed: Number(process.env.TALLYBROOK_SEED ?? 20_261_203) }
+const parameters = { numRuns: 30, verbose: 1, seed: Number(process.env.TALLYBROOK_SEED ?? 20_261_203) }
 const solveLp = solveLpBy(await loadHighs())
 
 const kinds: Record<string, Omit<RandomBookOptions, 'density'>> = {
