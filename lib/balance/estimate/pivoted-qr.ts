@@ -98,15 +98,10 @@ function reflect(reflector: Float64Array, x: Float64Array, from: number): void {
 }
 
 /** Q'b, in place (length m). */
-export function applyQTransposed({ reflectors }: PivotedQr, b: Float64Array): void {
+function applyQTransposed({ reflectors }: PivotedQr, b: Float64Array): void {
   reflectors.forEach((reflector, k) => {
     reflect(reflector, b, k)
   })
-}
-
-/** Q times a vector of which the first `rank` entries are set, in place (length m). */
-export function applyQ({ reflectors }: PivotedQr, b: Float64Array): void {
-  for (let k = reflectors.length - 1; k >= 0; k--) reflect(reflectors[k] as Float64Array, b, k)
 }
 
 /** A least squares solution (length n) of the factored columns for b (length m, overwritten); what is free stays 0. */
